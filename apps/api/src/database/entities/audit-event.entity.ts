@@ -1,0 +1,50 @@
+import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+
+/** Append-only, hash-chained; triggers refuse UPDATE and DELETE. */
+@Entity({ name: 'audit_events' })
+@Index(['organisationId', 'sequence'])
+@Index(['objectId'])
+export class AuditEvent {
+  @PrimaryColumn({ type: 'integer' })
+  sequence!: number;
+
+  @Column({ type: 'varchar' })
+  at!: string;
+
+  @Column({ type: 'varchar', nullable: true })
+  actorId!: string | null;
+
+  @Column({ type: 'varchar' })
+  actorName!: string;
+
+  /** Whose act it was. */
+  @Column({ type: 'varchar', nullable: true })
+  organisationId!: string | null;
+
+  @Column({ type: 'varchar' })
+  organisationName!: string;
+
+  @Column({ type: 'varchar' })
+  action!: string;
+
+  @Column({ type: 'varchar' })
+  objectType!: string;
+
+  @Column({ type: 'varchar' })
+  objectId!: string;
+
+  @Column({ type: 'varchar' })
+  summary!: string;
+
+  @Column({ type: 'text', nullable: true })
+  before!: string | null;
+
+  @Column({ type: 'text', nullable: true })
+  after!: string | null;
+
+  @Column({ type: 'varchar' })
+  previousHash!: string;
+
+  @Column({ type: 'varchar' })
+  hash!: string;
+}
