@@ -60,6 +60,9 @@ const packageRoom = {
   mailparser: 'demo',
 };
 
+/** Files at the top of src that are not part of `app`: the ground everything stands on, and the entry. */
+const groundFiles = { config: 'config', clock: 'config', main: 'main' };
+
 const isTest = (path) =>
   /\.(test|spec)\.tsx?$/.test(path) || /(^|\/)(testing|e2e|bench)\//.test(path) || /\.bench\.\w+$/.test(path);
 
@@ -76,7 +79,7 @@ export function locate(path) {
   const [head, next] = source.split('/');
   const topFile = next === undefined;
   const name = head.replace(/(\.test)?\.\w+$/, '');
-  const room = topFile ? (['config', 'main'].includes(name) ? name : 'app') : head;
+  const room = topFile ? (groundFiles[name] ?? 'app') : head;
   return { file, workspace, room, feature: room === 'features' ? next : null, test };
 }
 

@@ -91,8 +91,10 @@ export const writeGate = {
         if (!writes.has(method)) return;
         const origin = rootOf(node.callee.object);
         if (origin.type !== 'Identifier') return;
-        if (comesFromGate(context.sourceCode.getScope(node), origin.name)) return;
-        const names = nameChain(node.callee.object);
+        const scope = context.sourceCode.getScope(node);
+        if (comesFromGate(scope, origin.name)) return;
+        const init = variableOf(scope, origin.name)?.defs[0]?.node.init;
+        const names = [...(init ? nameChain(init) : []), ...nameChain(node.callee.object)];
         if (names.some((name) => looksLikeDatabase.test(name) || name === 'getRepository')) {
           context.report({ node, messageId: 'outside', data: { call: [...names, method].join('.') } });
         }
