@@ -1,0 +1,16 @@
+export * from './verdict.ts';
+export * from './limits.ts';
+export * from './compile-limits.ts';
+export * from './judge-reading.ts';
+export * from './evaluate-readings.ts';
+export * from './tolerance-limits.ts';
+export * from './fit-class.ts';
+export * from './fits.ts';
+export * from './general-tolerances.ts';
+export * from './position.ts';
+export * from './bonus.ts';
+export * from './geometric.ts';
+export * from './profile-zone.ts';
+export type { GeneralClass } from '../tables/iso2768-tables.ts';
+export { isUndetermined, undetermined } from '../result.ts';
+export type { Undetermined } from '../result.ts';
