@@ -76,6 +76,8 @@ export const requestResponse = z
     id,
     number: z.int(),
     state: requestState,
+    /** On which side of the request the reader stands. */
+    side: z.enum(['customer', 'supplier']),
     customer: z.object({ id, name: z.string() }),
     supplier: z.object({ id, name: z.string() }),
     site: z.object({ id, name: z.string() }),
@@ -124,9 +126,13 @@ export const requestListItem = z
     number: z.int(),
     state: requestState,
     packageState: packageState.nullable(),
+    /** Newest round; null before the request is issued. */
+    submissionId: id.nullable(),
+    side: z.enum(['customer', 'supplier']),
     partNumber: z.string(),
     partName: z.string(),
     revision: z.string(),
+    customerName: z.string(),
     supplierName: z.string(),
     dueOn: calendarDate,
     questionOpen: z.boolean(),
@@ -151,13 +157,17 @@ export const requestThreadResponse = z
   .object({ items: z.array(requestMessage) })
   .meta({ id: 'RequestThread' });
 export type RequestThreadResponse = z.infer<typeof requestThreadResponse>;
+export type RequestMessageItem = z.infer<typeof requestMessage>;
 export const writeMessageRequest = z
   .strictObject({ kind: z.enum(['question', 'answer', 'note']), text: requiredLongText })
   .meta({ id: 'WriteMessageRequest' });
+export type WriteMessageRequest = z.input<typeof writeMessageRequest>;
 
 /** Element list that a submission level implies; the customer may edit it. */
 export const elementTemplateResponse = z
   .object({
+    /** Where the list was read. */
+    source: z.string(),
     levels: z.array(
       z.object({
         level: z.int(),
@@ -166,3 +176,4 @@ export const elementTemplateResponse = z
     ),
   })
   .meta({ id: 'ElementTemplate' });
+export type ElementTemplateResponse = z.infer<typeof elementTemplateResponse>;

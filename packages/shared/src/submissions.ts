@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { fileResponse } from './documents.ts';
+import { pieceResponse, streamResponse } from './measurements.ts';
 import { calendarDate, id, instant, longText, optionalShortText, shortText, version } from './primitives.ts';
 import { page, pageQuery } from './pagination.ts';
 import { decisionRule, elementDemand, requestReason, streamKinds } from './requests.ts';
@@ -223,3 +224,11 @@ export const addPiecesRequest = z
   .strictObject({ pieces: z.array(z.strictObject(pieceFields)).min(1).max(1000) })
   .meta({ id: 'AddPiecesRequest' });
 export const changePieceRequest = z.strictObject(pieceFields).meta({ id: 'ChangePieceRequest' });
+export type ChangePieceRequest = z.input<typeof changePieceRequest>;
+/** A piece that bears readings is removed only when the person has said so. */
+export const removePieceQuery = z.strictObject({ confirm: z.literal('readings').optional() });
+/** Streams and sample pieces of a round, without characteristics and readings. */
+export const submissionPiecesResponse = z
+  .object({ streams: z.array(streamResponse), pieces: z.array(pieceResponse), editable: z.boolean() })
+  .meta({ id: 'SubmissionPieces' });
+export type SubmissionPiecesResponse = z.infer<typeof submissionPiecesResponse>;
