@@ -58,7 +58,7 @@ function isGateManager(definition) {
   const annotation = definition.name.typeAnnotation?.typeAnnotation;
   if (annotation?.type === 'TSTypeReference' && annotation.typeName.name === 'EntityManager') return true;
   const call = definition.node.parent;
-  return call?.type === 'CallExpression' && calleeName(call) === 'writeTransaction';
+  return call?.type === 'CallExpression' && ['writeTransaction', 'transact'].includes(calleeName(call));
 }
 
 function comesFromGate(scope, name) {

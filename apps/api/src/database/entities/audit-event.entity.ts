@@ -1,12 +1,16 @@
-import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import { Column, Entity, Index, PrimaryColumn, Unique } from 'typeorm';
 
 /** Append-only, hash-chained; triggers refuse UPDATE and DELETE. */
 @Entity({ name: 'audit_events' })
-@Index(['organisationId', 'sequence'])
+@Unique(['organisationId', 'organisationSequence'])
 @Index(['objectId'])
 export class AuditEvent {
   @PrimaryColumn({ type: 'integer' })
   sequence!: number;
+
+  /** Gapless within one organisation: what its people see instead of the number of the whole trail. */
+  @Column({ type: 'integer' })
+  organisationSequence!: number;
 
   @Column({ type: 'varchar' })
   at!: string;

@@ -13,8 +13,8 @@ import type { Role } from '@trammel/shared/roles';
 import { Organisation } from './organisation.entity.ts';
 
 @Entity({ name: 'users' })
-@Unique(['email'])
-@Index(['organisationId'])
+@Unique(['organisationId', 'email'])
+@Index(['email'])
 export class User {
   @PrimaryColumn({ type: 'varchar' })
   id!: string;
@@ -22,7 +22,7 @@ export class User {
   @Column({ type: 'varchar' })
   organisationId!: string;
 
-  /** Lower case, unique over all organisations. */
+  /** Lower case. Unique within the organisation only: an invitation must not tell that the address is known elsewhere. */
   @Column({ type: 'varchar' })
   email!: string;
 
