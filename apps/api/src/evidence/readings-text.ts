@@ -1,0 +1,12 @@
+/** Readings of one row as they are stored: exact texts by slot, one a line; an empty line is a piece not measured. */
+export function decodeReadings(stored: string): (string | null)[] {
+  return stored === '' ? [] : stored.split('\n').map((text) => (text === '' ? null : text));
+}
+
+export function encodeReadings(texts: readonly (string | null)[]): string {
+  let last = texts.length;
+  while (last > 0 && (texts[last - 1] ?? null) === null) last -= 1;
+  let stored = '';
+  for (let slot = 0; slot < last; slot += 1) stored += (slot === 0 ? '' : '\n') + (texts[slot] ?? '');
+  return stored;
+}
