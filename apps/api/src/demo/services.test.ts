@@ -36,7 +36,7 @@ const status = (address: string, path: string, headers: Record<string, string> =
   });
 
 const sender = (port: number) =>
-  createTransport({ host: '127.0.0.1', port, ignoreTLS: true, from: 'Trammel <trammel@localhost>' });
+  createTransport({ host: '127.0.0.1', port, ignoreTLS: true }, { from: 'Trammel <trammel@localhost>' });
 
 async function mailService() {
   const catcher = await open(startMailCatcher(folder, 0));

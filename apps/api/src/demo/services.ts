@@ -35,6 +35,7 @@ async function main(): Promise<void> {
   process.once('SIGINT', stop);
   // The parent is gone without a word: nothing here may outlive it.
   process.once('disconnect', stop);
+  if (process.send && !process.connected) stop();
 
   const addresses = {
     store: store.address,
