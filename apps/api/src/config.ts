@@ -11,7 +11,7 @@ const flag = z
 
 const port = z.coerce.number().int().min(0).max(65_535);
 
-const environment = z.object({
+export const environment = z.object({
   NODE_ENV: z.string().default('development'),
   TRAMMEL_DEMO: flag,
   HOST: z.string().min(1).default('127.0.0.1'),
