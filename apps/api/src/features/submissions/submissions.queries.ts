@@ -6,6 +6,16 @@ import type { Actor } from '../../http/actor.ts';
 import { Conflict, Forbidden, NotFound } from '../../http/problems.ts';
 import { sideOf, type Side } from './submissions.rules.ts';
 
+export {
+  countRows,
+  inWork,
+  isDerivedElement,
+  openForResubmission,
+  pieceLabel,
+  sideOf,
+  type Side,
+} from './submissions.rules.ts';
+
 export interface FoundSubmission {
   readonly submission: Submission;
   readonly side: Side;
