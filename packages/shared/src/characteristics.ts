@@ -83,6 +83,8 @@ export const toleranceSpec = z.discriminatedUnion('form', [
     nominal: decimalText,
     generalClass: z.enum(['f', 'm', 'c', 'v']),
     feature: z.enum(['linear', 'radius-chamfer', 'angular']).default('linear'),
+    /** Angles only: the table is entered with the shorter leg in mm. */
+    shorterLeg: decimalText.optional(),
   }),
   z.strictObject({ form: z.literal('none'), nominal: decimalText.nullable().default(null) }),
 ]);

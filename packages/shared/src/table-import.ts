@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { characteristicKind } from './characteristics.ts';
 import { id } from './primitives.ts';
 
 /** What the person declares about a file; nothing is guessed silently: the guess is shown and can be changed. */
@@ -58,12 +59,18 @@ export const characteristicColumns = [
   'attributeAllowed',
   'pieces',
   'geometricType',
+  'diametral',
   'modifier',
   'datums',
+  'feature',
   'sizeBalloon',
+  'zeroBound',
+  'generalFeature',
+  'shorterLeg',
   'controlledBy',
   'note',
 ] as const;
+export type CharacteristicColumn = (typeof characteristicColumns)[number];
 export const characteristicMapping = z.record(z.enum(characteristicColumns), z.int().min(0).nullable());
 
 export const remapCharacteristicsRequest = z
@@ -83,6 +90,7 @@ export const characteristicImportPreview = z
         line: z.int(),
         balloon: z.string(),
         description: z.string(),
+        kind: characteristicKind,
         nominal: z.string().nullable(),
         lowerLimit: z.string().nullable(),
         upperLimit: z.string().nullable(),

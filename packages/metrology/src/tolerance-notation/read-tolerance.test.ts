@@ -106,6 +106,7 @@ describe('a stated tolerance written into two cells', () => {
     [{ form: 'general', nominal: '30', generalClass: 'm', feature: 'linear' }, false],
     [{ form: 'general', nominal: '3', generalClass: 'c', feature: 'radius-chamfer' }, false],
     [{ form: 'general', nominal: '45', generalClass: 'f', feature: 'angular' }, false],
+    [{ form: 'general', nominal: '45', generalClass: 'f', feature: 'angular', shorterLeg: '50' }, false],
     [{ form: 'none', nominal: '27.0' }, false],
     [{ form: 'none', nominal: null }, false],
   ];

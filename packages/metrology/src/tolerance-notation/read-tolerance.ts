@@ -124,15 +124,17 @@ const limits: Reader = ({ nominal, text, locale }) => {
   return { form: 'limits', lower: ordered ? one : two, upper: ordered ? two : one, nominal };
 };
 
-const GENERAL = /^(?:(?:DIN )?(?:EN )?(?:ISO )?2768\s?-?\s?)?([fmcv])[HKL]?(?: (radius|angular))?$/i;
-const general: Reader = ({ nominal, text }) => {
+const GENERAL =
+  /^(?:(?:DIN )?(?:EN )?(?:ISO )?2768\s?-?\s?)?([fmcv])[HKL]?(?: (radius|angular)(?: leg ([\d.,]+))?)?$/i;
+const general: Reader = ({ nominal, text, locale }) => {
   const match = GENERAL.exec(text);
   if (!match) return null;
   if (nominal === null) return needsNominal();
   const generalClass = (match[1] ?? 'm').toLowerCase() as 'f' | 'm' | 'c' | 'v';
   const word = match[2]?.toLowerCase();
   const feature = word === 'radius' ? 'radius-chamfer' : word === 'angular' ? 'angular' : 'linear';
-  return { form: 'general', nominal, generalClass, feature };
+  const shorterLeg = match[3] === undefined ? null : plainNumber(match[3], locale);
+  return { form: 'general', nominal, generalClass, feature, ...(shorterLeg === null ? {} : { shorterLeg }) };
 };
 
 const TOTAL = pattern(String.raw`(${NUMBER})\s*(?:total|gesamt)`);

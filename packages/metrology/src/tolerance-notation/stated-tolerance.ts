@@ -16,5 +16,7 @@ export type StatedTolerance =
       readonly nominal: string;
       readonly generalClass: 'f' | 'm' | 'c' | 'v';
       readonly feature: 'linear' | 'radius-chamfer' | 'angular';
+      /** Angles only: shorter leg in mm. */
+      readonly shorterLeg?: string;
     }
   | { readonly form: 'none'; readonly nominal: string | null };

@@ -27,7 +27,8 @@ export function writeTolerance(
       return { nominal: stated.nominal, tolerance: stated.fitClass };
     case 'general': {
       const feature = { linear: '', 'radius-chamfer': ' radius', angular: ' angular' }[stated.feature];
-      return { nominal: stated.nominal, tolerance: `${stated.generalClass}${feature}` };
+      const leg = stated.shorterLeg === undefined ? '' : ` leg ${stated.shorterLeg}`;
+      return { nominal: stated.nominal, tolerance: `${stated.generalClass}${feature}${leg}` };
     }
     case 'none':
       return { nominal: stated.nominal ?? '', tolerance: '' };
