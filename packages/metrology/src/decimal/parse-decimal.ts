@@ -47,7 +47,7 @@ function refuse(text: string): Undetermined {
     );
   if (/^[+\-\u2212]?\d[\d.]*(?:['_\u2019][\d.]+)+$/.test(text))
     return undetermined('grouping', `${shown} has a sign between groups of digits: leave it out`);
-  if (/^[+\-\u2212]?\s*[\d.]+(?:\s+[\d.]+)*$/.test(text))
+  if (/\d/.test(text) && /^[+\-\u2212]?\s*[\d.]+(?:\s+[\d.]+)*$/.test(text))
     return undetermined(
       'space',
       `${shown} has a space or more than one point inside: write one number without spaces`,
