@@ -38,6 +38,9 @@ export function overallIndex(
     upper === null ? Infinity : (upper - mean) / (3 * s),
     lower === null ? Infinity : (mean - lower) / (3 * s),
   );
-  const lowerBound = value - normalQuantile(0.95) * Math.sqrt(1 / (9 * n) + value ** 2 / (2 * (n - 1)));
+  const z = normalQuantile(0.95);
+  const lowerBound = isUndetermined(z)
+    ? null
+    : value - z * Math.sqrt(1 / (9 * n) + (value * value) / (2 * (n - 1)));
   return { index: { name: 'Ppk', value, lowerBound, n }, indexReason: null };
 }
