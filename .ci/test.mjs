@@ -6,6 +6,7 @@ import { ensureChromium } from './chromium.mjs';
 import { countTests } from './counts.mjs';
 import { ensureModules } from './modules.mjs';
 import { runNode, Stop, top } from './processes.mjs';
+import { checkStart } from './start-check.mjs';
 
 const limitMs = 30 * 60_000;
 const reports = join(top, 'reports');
@@ -105,6 +106,7 @@ async function everything() {
     checks(),
     tests('unit', ['metrology', 'shared', 'house', 'portal', 'api']),
   ]);
+  if (built) await step('start', checkStart);
   await browserTests(built);
 }
 

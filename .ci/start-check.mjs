@@ -1,0 +1,118 @@
+// The promise of `npm start`, kept in the built product: it becomes ready, says where things are, stops cleanly when
+// asked to, refuses a port in use, and finds its data again. Run by `npm test` after the build.
+import { spawn } from 'node:child_process';
+import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { createServer } from 'node:net';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { pathToFileURL } from 'node:url';
+import { top } from './processes.mjs';
+
+/** @returns {Promise<number>} */
+function freePort() {
+  return new Promise((resolve) => {
+    const probe = createServer().listen(0, '127.0.0.1', () => {
+      const { port } = /** @type {import('node:net').AddressInfo} */ (probe.address());
+      probe.close(() => resolve(port));
+    });
+  });
+}
+
+/** @param {string} dataDir @param {number} port */
+function begin(dataDir, port) {
+  const env = {
+    ...process.env,
+    DATA_DIR: dataDir,
+    PORT: String(port),
+    MAIL_PAGE_PORT: '0',
+    HOST: '127.0.0.1',
+  };
+  const child = spawn(process.execPath, ['.ci/start.mjs'], {
+    cwd: top,
+    env,
+    stdio: ['ignore', 'pipe', 'pipe'],
+  });
+  let output = '';
+  const ended = new Promise((resolve) => child.once('exit', (code, signal) => resolve(code ?? signal)));
+  const said = (/** @type {string} */ words) =>
+    new Promise((/** @type {(value: void) => void} */ resolve, reject) => {
+      const look = (/** @type {Buffer | string} */ chunk) => {
+        output += chunk.toString();
+        if (output.includes(words)) resolve();
+      };
+      child.stdout.on('data', look);
+      child.stderr.on('data', look);
+      void ended.then((code) =>
+        reject(new Error(`npm start ended with ${code} before it said "${words}":\n${output}`)),
+      );
+    });
+  return { child, ended, said, output: () => output };
+}
+
+/** @param {boolean} holds @param {string} what @param {string} [seen] */
+function expect(holds, what, seen = '') {
+  if (!holds) throw new Error(`npm start: ${what}${seen && `\n${seen}`}`);
+}
+
+/** @param {string} address */
+async function answers(address) {
+  return fetch(address).then(
+    (answer) => answer.ok,
+    () => false,
+  );
+}
+
+/** @param {string} output @param {string} caption */
+const addressIn = (output, caption) => new RegExp(`^${caption}:\\s+(\\S+)$`, 'm').exec(output)?.[1] ?? '';
+
+/** @param {string} dataDir @param {number} port @param {NodeJS.Signals} signal */
+async function oneLife(dataDir, port, signal) {
+  const start = begin(dataDir, port);
+  try {
+    await start.said('Ctrl-C stops everything');
+    const output = start.output();
+    const address = addressIn(output, 'Trammel is ready');
+    const mailPage = addressIn(output, 'Caught mail');
+    expect(address === `http://127.0.0.1:${port}`, 'it prints its address', output);
+    expect(/^Demo sign-ins, all with the password \S+$/m.test(output), 'it prints the demo sign-ins', output);
+    expect((output.match(/@/g) ?? []).length >= 3, 'with a mail address for each', output);
+    const portal = await fetch(address);
+    expect((await portal.text()).includes('<div id="root">'), 'the address answers with the portal');
+    expect(await answers(mailPage), 'caught mail can be read', mailPage);
+    expect(await answers(`${address}/health/live`), 'it says that it lives');
+    const second = begin(dataDir, port);
+    expect((await second.ended) === 1, 'a second start on the same port is refused', second.output());
+    expect(
+      second.output().includes(`Port ${port} on 127.0.0.1 is in use`),
+      'with the reason',
+      second.output(),
+    );
+    start.child.kill(signal);
+    expect((await start.ended) === 0, `${signal} ends it with 0`, start.output());
+    expect(!(await answers(`${address}/health/live`)), 'the server is gone afterwards');
+    expect(!(await answers(mailPage)), 'and the mail page');
+    return output;
+  } finally {
+    start.child.kill('SIGKILL');
+  }
+}
+
+export async function checkStart() {
+  const dataDir = mkdtempSync(join(tmpdir(), 'trammel-start-'));
+  try {
+    const port = await freePort();
+    const people = (/** @type {string} */ output) => output.slice(output.indexOf('Demo sign-ins'));
+    const first = await oneLife(dataDir, port, 'SIGINT');
+    const key = readFileSync(join(dataDir, 'keys/audit.key'), 'utf8');
+    const again = await oneLife(dataDir, port, 'SIGTERM');
+    expect(people(first) === people(again), 'a second start offers the same people', again);
+    expect(key === readFileSync(join(dataDir, 'keys/audit.key'), 'utf8'), 'a second start keeps its keys');
+  } finally {
+    rmSync(dataDir, { recursive: true, force: true });
+  }
+}
+
+if (import.meta.url === pathToFileURL(process.argv[1] ?? '').href) {
+  await checkStart();
+  console.log('npm start keeps its promise');
+}
