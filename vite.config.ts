@@ -10,6 +10,7 @@ const node = (name: string, root: string) => ({
 });
 
 export default defineConfig({
+  publicDir: 'apps/portal/public',
   plugins: [react(), tailwindcss()],
   build: { outDir: 'dist/portal', emptyOutDir: true, target: 'es2022', assetsInlineLimit: 0, manifest: true },
   server: { port: 4181, strictPort: false, proxy: { '/api': { target: apiAddress } } },

@@ -1,0 +1,5 @@
+import { ForgottenPassword } from '../../features/accounts/components/forgotten-password.tsx';
+
+export function Component() {
+  return <ForgottenPassword />;
+}

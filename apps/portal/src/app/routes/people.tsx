@@ -1,0 +1,5 @@
+import { PeoplePage } from '../../features/organisations/components/people-page.tsx';
+
+export function Component() {
+  return <PeoplePage />;
+}

@@ -1,0 +1,24 @@
+import '@testing-library/jest-dom/vitest';
+import { cleanup } from '@testing-library/react';
+import { afterEach, vi } from 'vitest';
+import { setCsrfToken } from '../lib/api-client.ts';
+
+afterEach(() => {
+  cleanup();
+  vi.unstubAllGlobals();
+  localStorage.clear();
+  setCsrfToken(null);
+});
+
+// jsdom has neither modal dialogs nor popovers: these open and close, without the browser's focus rules.
+HTMLDialogElement.prototype.showModal ??= function showModal(this: HTMLDialogElement) {
+  this.open = true;
+  this.querySelector<HTMLElement>('button, input, select, textarea')?.focus();
+};
+HTMLDialogElement.prototype.close ??= function close(this: HTMLDialogElement) {
+  this.open = false;
+};
+HTMLElement.prototype.showPopover ??= function showPopover() {};
+HTMLElement.prototype.hidePopover ??= function hidePopover() {};
+Element.prototype.scrollIntoView ??= function scrollIntoView() {};
+window.scrollTo = () => undefined;
