@@ -4,9 +4,12 @@ import type { Clock } from './clock.ts';
 import type { Config } from './config.ts';
 import type { Database } from './database/data-source.ts';
 import { IdempotencyKeys } from './database/idempotency.ts';
+import { passwordsRoutes } from './features/accounts/passwords.routes.ts';
+import { peopleRoutes } from './features/accounts/people.routes.ts';
 import { sessionsRoutes } from './features/accounts/sessions.routes.ts';
 import { createActorFinder } from './features/accounts/session-touch.ts';
 import { confirmPassword } from './features/accounts/sign-in.service.ts';
+import { organisationsRoutes } from './features/organisations/organisations.routes.ts';
 import { ApiRouter } from './http/api-router.ts';
 import { createAuthentication } from './http/authenticate.ts';
 import { noSuchRoute } from './http/unknown-route.ts';
@@ -51,7 +54,8 @@ export function createApp(dependencies: Dependencies): App {
       clock,
       findActor: createActorFinder(db, clock, log),
     }),
-    confirmPassword: (actor, password) => confirmPassword({ db, clock, hashing }, actor, password),
+    confirmPassword: (actor, password, pointer) =>
+      confirmPassword({ db, clock, hashing }, actor, password, pointer),
     checkEveryAnswer: dependencies.checkEveryAnswer,
   };
 
@@ -64,6 +68,9 @@ export function createApp(dependencies: Dependencies): App {
 
   const router = new ApiRouter(core);
   sessionsRoutes(router);
+  passwordsRoutes(router);
+  peopleRoutes(router);
+  organisationsRoutes(router);
 
   app.use('/api', router.express, noSuchRoute(router));
   app.use(createErrorHandler(log));

@@ -18,7 +18,7 @@ export interface Core {
   readonly hashing: PasswordHashing;
   readonly authentication: Authentication;
   readonly limits: RateLimits;
-  readonly confirmPassword: (actor: Actor, password: string) => Promise<void>;
+  readonly confirmPassword: (actor: Actor, password: string, pointer?: string) => Promise<void>;
   /** Also check answers of routes that are checked in tests only. */
   readonly checkEveryAnswer: boolean;
 }

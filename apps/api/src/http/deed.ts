@@ -16,8 +16,8 @@ export interface Deed {
   /** Read-only, sees committed rows only; inside `transact` read through its manager instead. */
   readonly reader: DataSource;
   /**
-   * For signing: asks again for the password of the person signed in. Throws when it is wrong, slows down when it is
-   * wrong often, records both. Hashing waits, so it comes before the transaction.
+   * For signing: asks again for the password of the person signed in. A wrong one is 422 at `pointer` (`/password` unless
+   * said otherwise), often wrong slows down, both are recorded. Hashing waits, so it comes before the transaction.
    */
-  readonly confirmPassword: (password: string) => Promise<void>;
+  readonly confirmPassword: (password: string, pointer?: string) => Promise<void>;
 }

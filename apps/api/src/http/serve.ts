@@ -42,8 +42,8 @@ export async function serve(core: Core, route: RouteRecord, req: Request, res: R
     publicUrl: core.config.publicUrl,
     transact: core.db.writeTransaction,
     reader: core.db.reader,
-    confirmPassword: (password) =>
-      actor ? core.confirmPassword(actor, password) : Promise.reject(new Unauthenticated()),
+    confirmPassword: (password, pointer) =>
+      actor ? core.confirmPassword(actor, password, pointer) : Promise.reject(new Unauthenticated()),
   };
   const call = { deed, params, query, body, version, req, res };
   if (key !== undefined && actor) {

@@ -143,6 +143,6 @@ export async function deedOf(app: TestApp, user: { id: string }): Promise<Deed> 
     publicUrl: app.url,
     transact: app.db.writeTransaction,
     reader: app.db.reader,
-    confirmPassword: (password) => app.core.confirmPassword(actor, password),
+    confirmPassword: (password, pointer) => app.core.confirmPassword(actor, password, pointer),
   };
 }

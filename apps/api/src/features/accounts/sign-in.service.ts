@@ -8,7 +8,7 @@ import { Organisation } from '../../database/entities/organisation.entity.ts';
 import { Session } from '../../database/entities/session.entity.ts';
 import { User } from '../../database/entities/user.entity.ts';
 import type { Actor } from '../../http/actor.ts';
-import { TooMany, Unauthenticated } from '../../http/problems.ts';
+import { invalidField, TooMany, Unauthenticated } from '../../http/problems.ts';
 import { forgetFailures, mostAttempts, noteFailure, UnknownAddresses } from './failed-attempts.ts';
 import { absoluteLimit } from './sessions.queries.ts';
 
@@ -83,7 +83,12 @@ export async function openSession(
 }
 
 /** Asks again for the password of the person who is about to sign. */
-export async function confirmPassword(core: SignInCore, actor: Actor, password: string): Promise<void> {
+export async function confirmPassword(
+  core: SignInCore,
+  actor: Actor,
+  password: string,
+  pointer = '/password',
+): Promise<void> {
   const now = core.clock.now();
   const user = await core.db.reader.getRepository(User).findOneByOrFail({ id: actor.userId });
   assertNotSlowedDown([user], user.email, now);
@@ -105,11 +110,11 @@ export async function confirmPassword(core: SignInCore, actor: Actor, password: 
         action: 'password.refused',
         objectType: 'user',
         objectId: user.id,
-        summary: `A wrong password was given for a signature (${failures} in a row)`,
+        summary: `A wrong password was given where it is asked for again (${failures} in a row)`,
       },
     );
   });
-  throw new Unauthenticated('The password is not right. Nothing was signed.');
+  throw invalidField(pointer, 'The password is not right. Nothing was changed.');
 }
 
 function assertNotSlowedDown(users: readonly User[], address: string, now: string): void {

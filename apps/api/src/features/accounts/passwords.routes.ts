@@ -1,0 +1,67 @@
+import {
+  changePasswordRequest,
+  passwordResetRequest,
+  setPasswordRequest,
+  tokenParams,
+  tokenStateResponse,
+} from '@trammel/shared/accounts';
+import type { ApiRouter } from '../../http/api-router.ts';
+import { route } from '../../http/route.ts';
+import { askForReset, changePassword, readToken, setPasswordByToken } from './passwords.service.ts';
+
+const limit = { max: 20, seconds: 300 };
+
+export function passwordsRoutes(router: ApiRouter): void {
+  const { hashing } = router.core;
+
+  route(router, {
+    method: 'post',
+    path: '/account/password',
+    permission: 'signed-in',
+    summary: 'Change your password',
+    body: changePasswordRequest,
+    response: 'nothing',
+    limit,
+    handler: ({ deed, body }) => changePassword(deed, hashing, body),
+  });
+
+  route(router, {
+    method: 'post',
+    path: '/password-resets',
+    permission: 'public',
+    summary: 'Ask for a link to set a new password',
+    body: passwordResetRequest,
+    response: 'nothing',
+    limit,
+    handler: ({ deed, body }) => askForReset(deed, body.email),
+  });
+
+  route(router, {
+    method: 'get',
+    path: '/account-tokens/:token',
+    permission: 'public',
+    summary: 'Whom the link of an invitation or reset belongs to',
+    params: tokenParams,
+    response: tokenStateResponse,
+    limit: { max: 60, seconds: 300 },
+    handler: ({ deed, params }) => readToken(deed.reader, params.token, deed.now),
+  });
+
+  for (const [path, kind] of [
+    ['/password-resets/:token', 'password-reset'],
+    ['/invitations/:token', 'invitation'],
+  ] as const) {
+    route(router, {
+      method: 'post',
+      path,
+      permission: 'public',
+      summary: kind === 'invitation' ? 'Accept an invitation by choosing a password' : 'Set a new password',
+      params: tokenParams,
+      body: setPasswordRequest,
+      response: 'nothing',
+      limit,
+      handler: ({ deed, params, body }) =>
+        setPasswordByToken(deed, hashing, kind, params.token, body.newPassword),
+    });
+  }
+}
