@@ -1,7 +1,9 @@
+import { join } from 'node:path';
 import express, { type Express } from 'express';
 import type { Logger } from 'pino';
 import type { Clock } from './clock.ts';
 import type { Config } from './config.ts';
+import { AuditAnchors } from './database/audit-anchors.ts';
 import type { Database } from './database/data-source.ts';
 import { IdempotencyKeys } from './database/idempotency.ts';
 import { passwordsRoutes } from './features/accounts/passwords.routes.ts';
@@ -9,6 +11,7 @@ import { peopleRoutes } from './features/accounts/people.routes.ts';
 import { sessionsRoutes } from './features/accounts/sessions.routes.ts';
 import { createActorFinder } from './features/accounts/session-touch.ts';
 import { confirmPassword } from './features/accounts/sign-in.service.ts';
+import { auditRoutes } from './features/audit/audit.routes.ts';
 import { organisationsRoutes } from './features/organisations/organisations.routes.ts';
 import { ApiRouter } from './http/api-router.ts';
 import { createAuthentication } from './http/authenticate.ts';
@@ -66,11 +69,13 @@ export function createApp(dependencies: Dependencies): App {
   app.use(requestLog(log));
   app.use(securityHeaders(config.publicUrl.startsWith('https:')));
 
+  const anchors = new AuditAnchors(join(config.dataDir, 'audit-anchors.log'), config.secrets.audit);
   const router = new ApiRouter(core);
   sessionsRoutes(router);
   passwordsRoutes(router);
   peopleRoutes(router);
   organisationsRoutes(router);
+  auditRoutes(router, anchors);
 
   app.use('/api', router.express, noSuchRoute(router));
   app.use(createErrorHandler(log));
