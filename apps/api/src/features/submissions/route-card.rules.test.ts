@@ -11,9 +11,9 @@ const preparing: RoundFacts = {
   supplierName: 'Quillmark Turning',
   issued: stamp('Ines Carrow'),
   started: stamp('Joana Pell'),
-  measured: { ...stamp('Joana Pell'), done: 20, of: 32 },
-  evidence: { who: null, at: null, open: 2 },
-  checked: { who: null, at: null, stops: 3 },
+  measured: { done: 20, of: 32 },
+  evidence: { open: 2 },
+  checked: { at: null, stops: 3 },
   warrant: null,
   review: { startedAt: null },
   decision: null,
@@ -57,18 +57,23 @@ describe('a line of the route card', () => {
 
   it('has exactly one station in hand while work goes on', () => {
     expect(statesOf(preparing)).toEqual(['done', 'in-hand', 'ahead', 'ahead', 'ahead', 'ahead', 'ahead']);
-    const measured = { ...preparing, measured: { ...preparing.measured, done: 32 } };
+    const measured = { ...preparing, measured: { done: 32, of: 32 } };
     expect(statesOf(measured).slice(0, 4)).toEqual(['done', 'done', 'in-hand', 'ahead']);
   });
 
   it('tells the customer before submission how far it is, not what the check says', () => {
     const line = routeCardLine({
       ...preparing,
-      measured: { ...preparing.measured, done: 32 },
-      evidence: { who: null, at: null, open: 0 },
+      measured: { done: 32, of: 32 },
+      evidence: { open: 0 },
       resultsVisible: false,
     });
-    expect(line.stations[1]).toMatchObject({ state: 'done', who: null, at: null, note: '32 of 32 rows' });
+    expect(line.stations[1]).toMatchObject({
+      state: 'done',
+      who: 'Quillmark Turning',
+      at: null,
+      note: '32 of 32 rows',
+    });
     expect(line.stations[3]).toMatchObject({ station: 'check', state: 'in-hand', note: null });
   });
 

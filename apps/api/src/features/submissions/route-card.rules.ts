@@ -16,9 +16,9 @@ export interface RoundFacts {
   readonly issued: Stamp;
   /** Acknowledged, or for a later round: started. */
   readonly started: Stamp | null;
-  readonly measured: Stamp & { readonly done: number; readonly of: number };
-  readonly evidence: Stamp & { readonly open: number };
-  readonly checked: Stamp & { readonly stops: number };
+  readonly measured: { readonly done: number; readonly of: number };
+  readonly evidence: { readonly open: number };
+  readonly checked: { readonly at: string | null; readonly stops: number };
   readonly warrant: Stamp | null;
   readonly review: { readonly startedAt: string | null };
   readonly decision: Stamp | null;
@@ -70,8 +70,8 @@ function stationLine(station: Station, facts: RoundFacts): StationLine {
     note,
   });
   const submitted = facts.warrant !== null;
-  const seen = submitted || facts.resultsVisible;
-  const shown = (stamp: Stamp): Stamp => (seen ? stamp : { who: null, at: null });
+  /** The supplier's own work bears its name, and the moment at which it was handed in. */
+  const handedIn: Stamp = { who: facts.supplierName, at: facts.warrant?.at ?? null };
 
   switch (station) {
     case 'request':
@@ -81,19 +81,19 @@ function stationLine(station: Station, facts: RoundFacts): StationLine {
     case 'measurements': {
       const { done: rows, of } = facts.measured;
       const note = `${rows} of ${of} rows`;
-      return submitted || rows >= of ? done(shown(facts.measured), note) : inHand(facts.supplierName, note);
+      return submitted || rows >= of ? done(handedIn, note) : inHand(facts.supplierName, note);
     }
     case 'evidence': {
       const { open } = facts.evidence;
       const note = `${open} ${open === 1 ? 'element' : 'elements'} open`;
-      return submitted || open === 0 ? done(shown(facts.evidence)) : inHand(facts.supplierName, note);
+      return submitted || open === 0 ? done(handedIn) : inHand(facts.supplierName, note);
     }
     case 'check': {
       const { stops } = facts.checked;
-      if (submitted) return done(facts.checked);
+      if (submitted) return done({ who: 'Trammel', at: facts.checked.at });
       if (!facts.resultsVisible) return inHand(facts.supplierName, null);
       const note = `${stops} ${stops === 1 ? 'finding stops' : 'findings stop'} submission`;
-      return stops === 0 ? done(facts.checked) : inHand(facts.supplierName, note);
+      return stops === 0 ? done({ who: 'Trammel', at: null }) : inHand(facts.supplierName, note);
     }
     case 'warrant':
       return facts.warrant ? done(facts.warrant) : inHand(facts.supplierName, 'To sign');
