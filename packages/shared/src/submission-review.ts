@@ -104,3 +104,16 @@ export const decideElementRequest = z
   .strictObject({ mark: z.enum(elementMarks).nullable(), remark: longText, internalRemark: longText })
   .meta({ id: 'DecideElementRequest' });
 export type DecideElementRequest = z.input<typeof decideElementRequest>;
+
+export const elementDecisionResponse = z
+  .object({
+    elementId: id,
+    mark: z.enum(elementMarks).nullable(),
+    remark: z.string(),
+    internalRemark: z.string(),
+    by: z.string(),
+    at: instant,
+    markVersion: z.int(),
+  })
+  .meta({ id: 'ElementDecision' });
+export type ElementDecisionResponse = z.infer<typeof elementDecisionResponse>;

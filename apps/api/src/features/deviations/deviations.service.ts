@@ -33,7 +33,7 @@ import {
   type FoundSubmission,
 } from '../submissions/submissions.queries.ts';
 import { findDeviations } from './deviations.queries.ts';
-import { presentDeviation, type DeviationScene } from './deviations.presenter.ts';
+import { presentDeviation, type DeviationScene } from '../../evidence/deviation-presenter.ts';
 import { rangeFaults } from './deviations.rules.ts';
 
 type Asked = z.output<typeof askDeviationRequest>;

@@ -1,13 +1,13 @@
 import type { DeviationResponse } from '@trammel/shared/deviations';
 import { openForReview, openForSupplier } from '@trammel/shared/status';
-import type { Deviation } from '../../database/entities/deviation.entity.ts';
-import type { Submission } from '../../database/entities/submission.entity.ts';
-import type { CharacteristicFacts } from '../../evidence/characteristic-facts.ts';
-import { deviationCovers, outReadings } from '../../evidence/deviation-cover.ts';
-import type { Characteristics } from '../../evidence/package-context.ts';
-import { decodeReadings } from '../../evidence/readings-text.ts';
-import type { StoredRow } from '../../evidence/write-readings.ts';
-import type { Actor } from '../../http/actor.ts';
+import type { Deviation } from '../database/entities/deviation.entity.ts';
+import type { Submission } from '../database/entities/submission.entity.ts';
+import type { CharacteristicFacts } from './characteristic-facts.ts';
+import { deviationCovers, outReadings } from './deviation-cover.ts';
+import type { Characteristics } from './package-context.ts';
+import { decodeReadings } from './readings-text.ts';
+import type { StoredRow } from './write-readings.ts';
+import type { Actor } from '../http/actor.ts';
 
 export interface DeviationScene {
   readonly submission: Submission;
