@@ -20,35 +20,43 @@ export function logBeta(a: number, b: number): number {
 /** x^a y^b / B(a, b) with y = 1 − x given by the caller to all its digits. */
 export function betaPrefix(a: number, b: number, x: number, y: number): number {
   const n = a + b;
-  const exponent =
-    stirlingError(n) - stirlingError(a) - stirlingError(b) - devianceTerm(a, n * x) - devianceTerm(b, n * y);
+  // The smaller of x and y carries the digits: the other deviation is its opposite, because a + b = n(x + y).
+  const difference = x < y ? a - n * x : n * y - b;
+  const deviance = devianceTerm(a, n * x, difference) + devianceTerm(b, n * y, -difference);
+  const exponent = stirlingError(n) - stirlingError(a) - stirlingError(b) - deviance;
   return Math.sqrt((a / n) * (b / TWO_PI)) * Math.exp(exponent);
 }
 
-/** Continued fraction of DLMF 8.17.22 by the modified Lentz method. */
-function betaFraction(a: number, b: number, x: number): number {
+/**
+ * Continued fraction of A. R. Didonato and A. H. Morris, ACM Transactions on Mathematical Software 18 (1992) 360-373,
+ * by the modified Lentz method. It holds a·y − b·x, which DLMF 8.17.22 has only as a difference of nearly equal numbers
+ * when a is large and x near 1 (t with many degrees of freedom).
+ */
+function betaFraction(a: number, b: number, x: number, y: number): number {
   const tiny = 1e-300;
-  let c = 1;
-  let d = 1 - ((a + b) * x) / (a + 1);
-  d = 1 / (d === 0 ? tiny : d);
-  let h = d;
+  const lambda = a * y - b * x;
+  let h = (a * (lambda + 1)) / (a + 1);
+  if (h === 0) h = tiny;
+  let c = h;
+  let d = 0;
   for (let m = 1; m < 1_000_000; m += 1) {
-    const even = (m * (b - m) * x) / ((a + 2 * m - 1) * (a + 2 * m));
-    d = 1 + even * d;
+    const odd = a + 2 * m - 1;
+    const numerator = (((a + m - 1) * x) / odd) * ((a + b + m - 1) / odd) * m * (b - m) * x;
+    const denominator = m + (m * (b - m) * x) / odd + ((a + m) * (lambda + 1 + m * (1 + y))) / (odd + 2);
+    d = denominator + numerator * d;
     d = 1 / (d === 0 ? tiny : d);
-    c = 1 + even / c;
+    c = denominator + numerator / c;
     if (c === 0) c = tiny;
-    h *= d * c;
-    const odd = (-(a + m) * (a + b + m) * x) / ((a + 2 * m) * (a + 2 * m + 1));
-    d = 1 + odd * d;
-    d = 1 / (d === 0 ? tiny : d);
-    c = 1 + odd / c;
-    if (c === 0) c = tiny;
-    const factor = d * c;
+    const factor = c * d;
     h *= factor;
     if (Math.abs(factor - 1) < 1e-16) break;
   }
   return h;
+}
+
+function lowerBeta(x: number, y: number, a: number, b: number): number {
+  const prefix = betaPrefix(a, b, x, y);
+  return prefix === 0 ? 0 : prefix / betaFraction(a, b, x, y);
 }
 
 /**
@@ -58,8 +66,8 @@ function betaFraction(a: number, b: number, x: number): number {
 export function regularizedBetaPair(x: number, y: number, a: number, b: number): number {
   if (x <= 0) return 0;
   if (y <= 0) return 1;
-  if (x * (a + b + 2) < a + 1) return (betaPrefix(a, b, x, y) / a) * betaFraction(a, b, x);
-  return 1 - (betaPrefix(b, a, y, x) / b) * betaFraction(b, a, y);
+  if (x * (a + b + 2) < a + 1) return lowerBeta(x, y, a, b);
+  return 1 - lowerBeta(y, x, b, a);
 }
 
 /** Regularised incomplete beta function I_x(a, b) = P(B ≤ x) for B of the beta distribution. DLMF 8.17.2. */

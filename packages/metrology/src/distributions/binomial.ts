@@ -10,12 +10,9 @@ export function binomialProbability(k: number, n: number, p: number, q = 1 - p):
   if (q === 0) return k === n ? 1 : 0;
   if (k === 0) return Math.exp(n * (p < 0.1 ? Math.log1p(-p) : Math.log(q)));
   if (k === n) return Math.exp(n * (q < 0.1 ? Math.log1p(-q) : Math.log(p)));
-  const exponent =
-    stirlingError(n) -
-    stirlingError(k) -
-    stirlingError(n - k) -
-    devianceTerm(k, n * p) -
-    devianceTerm(n - k, n * q);
+  const difference = p < q ? k - n * p : n * q - (n - k);
+  const deviance = devianceTerm(k, n * p, difference) + devianceTerm(n - k, n * q, -difference);
+  const exponent = stirlingError(n) - stirlingError(k) - stirlingError(n - k) - deviance;
   return Math.sqrt(n / (TWO_PI * k * (n - k))) * Math.exp(exponent);
 }
 

@@ -59,12 +59,11 @@ export function stirlingError(a: number): number {
 /**
  * Deviance term a·ln(a/m) + m − a, a ≥ 0, m > 0, without cancellation near a = m.
  * With it the probabilities below keep their digits at large parameters (C. Loader, Fast and accurate computation
- * of binomial probabilities, 2000).
+ * of binomial probabilities, 2000). `difference` is a − m where the caller knows it better than the subtraction.
  */
-export function devianceTerm(a: number, m: number): number {
+export function devianceTerm(a: number, m: number, difference = a - m): number {
   if (a === 0) return m;
-  const difference = a - m;
-  if (Math.abs(difference) >= 0.1 * (a + m)) return a * Math.log(a / m) + m - a;
+  if (Math.abs(difference) >= 0.1 * (a + m)) return a * Math.log(a / m) - difference;
   const v = difference / (a + m);
   const square = v * v;
   let power = 2 * a * v;
@@ -84,6 +83,8 @@ export function gammaPrefix(a: number, x: number): number {
 }
 
 function lowerSeries(a: number, x: number): number {
+  const prefix = gammaPrefix(a, x);
+  if (prefix === 0) return 0;
   let term = 1 / a;
   let sum = term;
   for (let k = 1; k < 1_000_000; k += 1) {
@@ -91,10 +92,12 @@ function lowerSeries(a: number, x: number): number {
     sum += term;
     if (term < sum * 1e-17) break;
   }
-  return sum * gammaPrefix(a, x);
+  return sum * prefix;
 }
 
 function upperFraction(a: number, x: number): number {
+  const prefix = gammaPrefix(a, x);
+  if (prefix === 0) return 0;
   const tiny = 1e-300;
   let b = x + 1 - a;
   let c = 1 / tiny;
@@ -111,7 +114,7 @@ function upperFraction(a: number, x: number): number {
     h *= factor;
     if (Math.abs(factor - 1) < 1e-16) break;
   }
-  return h * gammaPrefix(a, x);
+  return h * prefix;
 }
 
 const usesSeries = (a: number, x: number): boolean => (a < 1 ? x < 0.7 : x < a + 1);

@@ -46,6 +46,8 @@ const delta = ['delta', finite] as const;
 const groups = ['groups', groupCount] as const;
 const k = ['k', finite] as const;
 const n = ['n', count] as const;
+const insideLot = (_k: number, lot: number, marked: number, sample: number) =>
+  marked > lot || sample > lot ? 'the marked pieces and the sample cannot be more than the lot' : null;
 const lotNumbers = [
   ['k', finite],
   ['lot', count],
@@ -147,9 +149,13 @@ export const studentizedRangeQuantile = guarded(
 );
 
 /** ln Γ(x), x > 0. */
-export const logGamma = guarded('logGamma', gammaFile.logGamma, [['x', positive]]);
+export const logGamma = guarded('logGamma', gammaFile.logGamma, [
+  ['x', { words: 'a finite number above 0', holds: (v) => v > 0 && v < Infinity }],
+]);
 /** Γ(x), 0 < x < 171.6. */
-export const gammaFunction = guarded('gammaFunction', gammaFile.gammaFunction, [['x', positive]]);
+export const gammaFunction = guarded('gammaFunction', gammaFile.gammaFunction, [
+  ['x', { words: 'a finite number above 0', holds: (v) => v > 0 && v < Infinity }],
+]);
 /** Regularised lower incomplete gamma function P(a, x) (DLMF 8.2.4), a > 0; 0 for x ≤ 0. */
 export const regularizedGammaP = guarded('regularizedGammaP', gammaFile.regularizedGammaP, [a, x]);
 /** Regularised upper incomplete gamma function Q(a, x) = 1 − P(a, x). */
@@ -195,16 +201,19 @@ export const hypergeometricProbability = guarded(
   'hypergeometricProbability',
   hypergeometricFile.hypergeometricProbability,
   lotNumbers,
+  insideLot,
 );
 /** P(X ≤ k) marked pieces in a sample without replacement. */
 export const hypergeometricCdf = guarded(
   'hypergeometricCdf',
   hypergeometricFile.hypergeometricCdf,
   lotNumbers,
+  insideLot,
 );
 /** P(X > k) marked pieces in a sample without replacement. */
 export const hypergeometricUpperTail = guarded(
   'hypergeometricUpperTail',
   hypergeometricFile.hypergeometricUpperTail,
   lotNumbers,
+  insideLot,
 );

@@ -44,21 +44,36 @@ export function logNormalDensity(z: number): number {
   return -0.5 * z * z - HALF_LOG_TWO_PI;
 }
 
+/** Φ(z) − ½ for small z ≥ 0 to all its digits: φ(z)(z + z³/3 + z⁵/15 + …), DLMF 7.6.2. */
+function normalFromCentre(z: number): number {
+  let term = z;
+  let sum = z;
+  for (let k = 3; term > sum * 1e-17; k += 2) {
+    term *= (z * z) / k;
+    sum += term;
+  }
+  return normalDensity(z) * sum;
+}
+
 /**
  * z with upper tail Q(z) = q, 0 < q < 1.
  *
- * Start: Abramowitz and Stegun 26.2.23 (error below 4.5e-4); then Halley steps on Q(z) − q divided by φ(z), which is
- * the Mills ratio minus q/φ(z) and so keeps its digits in the tail.
+ * Start: Abramowitz and Stegun 26.2.23 (error below 4.5e-4); then Halley steps. In the tail Q(z) − q is divided by φ(z)
+ * as the Mills ratio minus q/φ(z), near the centre Φ(z) − ½ is used, so that both keep their digits.
  */
 export function normalUpperQuantile(q: number): number {
   if (q === 0.5) return 0;
   if (q > 0.5) return -normalUpperQuantile(1 - q);
+  const central = q > 0.3;
   const t = Math.sqrt(-2 * Math.log(q));
   let z =
     t - (2.515517 + t * (0.802853 + t * 0.010328)) / (1 + t * (1.432788 + t * (0.189269 + t * 0.001308)));
+  if (central) z = Math.max(z, 0.5 - q);
   for (let step = 0; step < 3; step += 1) {
-    const mills = SQRT_HALF_PI * erfcx(Math.max(z, 0) * SQRT_HALF);
-    const ratio = mills - q / (ONE_OVER_SQRT_TWO_PI * gaussian(z));
+    const density = ONE_OVER_SQRT_TWO_PI * gaussian(z);
+    const ratio = central
+      ? (0.5 - q - normalFromCentre(z)) / density
+      : SQRT_HALF_PI * erfcx(z * SQRT_HALF) - q / density;
     z += ratio / (1 + 0.5 * z * ratio);
   }
   return z;

@@ -12,20 +12,24 @@ function solve(
   const goal = Math.log(target);
   let low = -Infinity;
   let high = Infinity;
+  let reach = 2;
   let u = Math.log(start);
-  for (let step = 0; step < 200; step += 1) {
+  for (let step = 0; step < 300; step += 1) {
     const x = Math.exp(u);
     const current = value(x);
     const gap = current > 0 ? Math.log(current) - goal : -Infinity;
     if (gap === 0) return x;
-    if (gap * sign < 0) low = Math.max(low, u);
-    else high = Math.min(high, u);
-    const slope = (density(x) * x * sign) / current;
-    let next = u - gap / slope;
-    if (!Number.isFinite(next)) next = NaN;
-    if (!(next > u - 3 && next < u + 3)) next = gap * sign < 0 ? u + 1.5 : u - 1.5;
-    if (next <= low || next >= high) next = (low + high) / 2;
-    if (Math.abs(next - u) <= 2e-16 * Math.max(1, Math.abs(u))) return Math.exp(next);
+    const below = gap * sign < 0;
+    if (below) low = u;
+    else high = u;
+    let next = u - (gap * current) / (density(x) * x * sign);
+    if (Math.abs(next - u) <= 3e-16 * Math.max(1, Math.abs(u))) return Math.exp(next);
+    if (!(Math.abs(next - u) < reach)) {
+      next = below ? u + reach : u - reach;
+      reach *= 2;
+    }
+    if (!(next > low && next < high)) next = (low + high) / 2;
+    if (next === u) return x;
     u = next;
   }
   return Math.exp(u);
