@@ -191,6 +191,7 @@ export type CharacteristicResponse = z.infer<typeof characteristicResponse>;
 export const characteristicsResponse = z
   .object({ items: z.array(characteristicResponse) })
   .meta({ id: 'Characteristics' });
+export type CharacteristicsResponse = z.infer<typeof characteristicsResponse>;
 
 /** The keyboard table saves whole blocks at once; a row without id is new. All or nothing. */
 export const characteristicTableRequest = z
