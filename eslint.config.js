@@ -22,8 +22,14 @@ export default ts.config(
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', ignoreRestSiblings: true }],
       'no-restricted-syntax': [
         'error',
-        { selector: 'JSXAttribute[name.name="dangerouslySetInnerHTML"]', message: 'User text is never markup.' },
-        { selector: 'CallExpression[callee.name="eval"]', message: 'No eval: the content policy forbids it.' },
+        {
+          selector: 'JSXAttribute[name.name="dangerouslySetInnerHTML"]',
+          message: 'User text is never markup.',
+        },
+        {
+          selector: 'CallExpression[callee.name="eval"]',
+          message: 'No eval: the content policy forbids it.',
+        },
       ],
     },
   },
