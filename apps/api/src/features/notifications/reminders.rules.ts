@@ -2,7 +2,8 @@ import type { PackageState } from '@trammel/shared/status';
 
 /** Days before the due date on which the supplier is reminded (common practice). */
 const steps = [1, 7, 14] as const;
-const acknowledgeWithinDays = 3;
+export const longestNoticeDays = 14;
+export const acknowledgeWithinDays = 3;
 
 export type ReminderMark = 'due-14' | 'due-7' | 'due-1' | 'overdue' | 'not-acknowledged';
 

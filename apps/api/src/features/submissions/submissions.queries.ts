@@ -76,23 +76,3 @@ export async function touchSubmission(
 ): Promise<void> {
   await manager.update(Submission, { id: submission.id }, { ...changes, updatedAt: now });
 }
-
-/**
- * Whether this file hangs on an element of a package that the person may see: own work on the supplier's side, submitted
- * rounds on the customer's. The documents feature asks before it hands out a file of another organisation.
- */
-export async function isFileInVisiblePackage(
-  manager: EntityManager,
-  actor: Actor,
-  fileId: string,
-): Promise<boolean> {
-  const rounds: Pick<Submission, 'customerId' | 'supplierId' | 'submittedAt'>[] = await manager.query(
-    `SELECT s.customer_id AS customerId, s.supplier_id AS supplierId, s.submitted_at AS submittedAt
-     FROM element_files f JOIN submissions s ON s.id = f.submission_id WHERE f.file_id = ?`,
-    [fileId],
-  );
-  return rounds.some((round) => {
-    const side = sideOf(actor, round);
-    return side === 'supplier' || (side === 'customer' && round.submittedAt !== null);
-  });
-}

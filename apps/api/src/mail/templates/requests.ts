@@ -104,11 +104,11 @@ export function dueMail(
   daysLeft: number,
   missing: MissingFacts,
 ): MailContent {
-  const days = daysLeft === 1 ? '1 day' : `${daysLeft} days`;
+  const when = daysLeft === 0 ? 'today' : daysLeft === 1 ? 'in 1 day' : `in ${daysLeft} days`;
   return composeMail({
-    subject: `${name(facts)} is due in ${days}`,
+    subject: `${name(facts)} is due ${when}`,
     to,
-    paragraphs: [`The package for ${facts.customerName} is due on ${facts.dueOn}, in ${days}.`],
+    paragraphs: [`The package for ${facts.customerName} is due on ${facts.dueOn}, ${when}.`],
     facts: [...scope(facts), ...missingLines(missing)],
     link: { label: 'Open the package', url: facts.url },
   });
