@@ -33,15 +33,18 @@ function begin(dataDir, port) {
     stdio: ['ignore', 'pipe', 'pipe'],
   });
   let output = '';
-  const ended = new Promise((resolve) => child.once('exit', (code, signal) => resolve(code ?? signal)));
+  let heard = () => undefined;
+  const hear = (/** @type {Buffer} */ chunk) => {
+    output += chunk.toString();
+    heard();
+  };
+  child.stdout.on('data', hear);
+  child.stderr.on('data', hear);
+  const ended = new Promise((resolve) => child.once('close', (code, signal) => resolve(code ?? signal)));
   const said = (/** @type {string} */ words) =>
     new Promise((/** @type {(value: void) => void} */ resolve, reject) => {
-      const look = (/** @type {Buffer | string} */ chunk) => {
-        output += chunk.toString();
-        if (output.includes(words)) resolve();
-      };
-      child.stdout.on('data', look);
-      child.stderr.on('data', look);
+      heard = () => void (output.includes(words) && resolve());
+      heard();
       void ended.then((code) =>
         reject(new Error(`npm start ended with ${code} before it said "${words}":\n${output}`)),
       );
