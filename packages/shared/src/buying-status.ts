@@ -86,3 +86,6 @@ export type BuyingLineResponse = z.infer<typeof buyingLineResponse>;
 export const recordDeliveryRequest = z
   .strictObject({ quantity: z.int().positive().max(100_000_000), note: longText.default('') })
   .meta({ id: 'RecordDeliveryRequest' });
+export const deliveryRecorded = z
+  .object({ id, piecesLeft: z.int().nullable() })
+  .meta({ id: 'DeliveryRecorded' });

@@ -25,7 +25,12 @@ export function sideOf(actor: Person, ends: Ends): Side | null {
 }
 
 /** States after which the supplier may hand in the next round. */
-export const openForResubmission: readonly PackageState[] = ['sent-back', 'rejected', 'interim-approval'];
+export const openForResubmission: readonly PackageState[] = [
+  'sent-back',
+  'rejected',
+  'interim-approval',
+  'lapsed',
+];
 
 /** Rounds that someone is working on: at most one for the same revision and site. */
 export const inWork: readonly PackageState[] = ['requested', 'in-preparation', 'submitted', 'in-review'];
