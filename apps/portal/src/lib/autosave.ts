@@ -41,6 +41,7 @@ export class Autosave<T> {
   private timer: ReturnType<typeof setTimeout> | undefined;
   private running: Promise<void> | null = null;
   private failures = 0;
+  private isRecovering = false;
 
   constructor(private readonly options: AutosaveOptions<T>) {
     this.value = options.initial;
@@ -64,6 +65,7 @@ export class Autosave<T> {
       return null;
     }
     if (draft.version === this.version) return draft.value;
+    this.isRecovering = true;
     this.publish({ state: 'conflict', conflict: { mine: draft.value, theirs: this.value } });
     return null;
   }
@@ -71,8 +73,11 @@ export class Autosave<T> {
   change(value: T): void {
     if (JSON.stringify(value) === JSON.stringify(this.value)) return;
     this.value = value;
-    if (this.snapshot.state === 'conflict') {
+    if (this.snapshot.conflict !== null) {
+      // A draft that a closed tab left must not be replaced by what is typed now: both wait for the choice.
+      if (this.isRecovering) return;
       this.keepDraft();
+      this.publish({ conflict: { ...this.snapshot.conflict, mine: value } });
       return;
     }
     if (!this.isDirty() && this.running === null) {
@@ -98,15 +103,24 @@ export class Autosave<T> {
     if (this.isDirty() && this.snapshot.state === 'waiting') await this.flush(options);
   }
 
-  /** After a conflict: `mine` is written over the newer version the person has seen; `theirs` drops the draft. */
-  resolve(choice: 'mine' | 'theirs', theirs: { value: T; version: number }): void {
+  /**
+   * After a conflict: `mine` is written over the newer version the person has seen; `theirs` drops the draft, and keeps
+   * what was typed on top of theirs since. Answers with the value that the form shows from now on.
+   */
+  resolve(choice: 'mine' | 'theirs', theirs: { value: T; version: number }): T {
     const mine = this.snapshot.conflict?.mine ?? this.value;
+    const typedOnTheirs = this.isRecovering ? this.value : theirs.value;
+    this.isRecovering = false;
     this.version = theirs.version;
     this.savedText = JSON.stringify(theirs.value);
-    this.value = choice === 'mine' ? mine : theirs.value;
-    this.publish({ state: choice === 'mine' ? 'waiting' : 'saved', conflict: null, problem: null });
-    if (choice === 'mine') this.schedule(0);
-    else dropDraft(this.options.key);
+    this.value = choice === 'mine' ? mine : typedOnTheirs;
+    const dirty = this.isDirty();
+    this.publish({ state: dirty ? 'waiting' : 'saved', conflict: null, problem: null });
+    if (dirty) {
+      this.keepDraft();
+      this.schedule(0);
+    } else dropDraft(this.options.key);
+    return this.value;
   }
 
   retryNow = (): void => {

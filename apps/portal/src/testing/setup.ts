@@ -4,21 +4,29 @@ import { afterEach, vi } from 'vitest';
 import { setCsrfToken } from '../lib/api-client.ts';
 
 afterEach(() => {
-  cleanup();
   vi.unstubAllGlobals();
-  localStorage.clear();
   setCsrfToken(null);
 });
 
-// jsdom has neither modal dialogs nor popovers: these open and close, without the browser's focus rules.
-HTMLDialogElement.prototype.showModal ??= function showModal(this: HTMLDialogElement) {
-  this.open = true;
-  this.querySelector<HTMLElement>('button, input, select, textarea')?.focus();
-};
-HTMLDialogElement.prototype.close ??= function close(this: HTMLDialogElement) {
-  this.open = false;
-};
-HTMLElement.prototype.showPopover ??= function showPopover() {};
-HTMLElement.prototype.hidePopover ??= function hidePopover() {};
-Element.prototype.scrollIntoView ??= function scrollIntoView() {};
-window.scrollTo = () => undefined;
+// Tests of pure modules run without a document.
+if (typeof window !== 'undefined') preparePage();
+
+function preparePage(): void {
+  afterEach(() => {
+    cleanup();
+    localStorage.clear();
+  });
+
+  // jsdom has neither modal dialogs nor popovers: these open and close, without the browser's focus rules.
+  HTMLDialogElement.prototype.showModal ??= function showModal(this: HTMLDialogElement) {
+    this.open = true;
+    this.querySelector<HTMLElement>('button, input, select, textarea')?.focus();
+  };
+  HTMLDialogElement.prototype.close ??= function close(this: HTMLDialogElement) {
+    this.open = false;
+  };
+  HTMLElement.prototype.showPopover ??= function showPopover() {};
+  HTMLElement.prototype.hidePopover ??= function hidePopover() {};
+  Element.prototype.scrollIntoView ??= function scrollIntoView() {};
+  window.scrollTo = () => undefined;
+}

@@ -80,8 +80,10 @@ export function scaleOf(data: BeamData): Scale {
     return linear(Number.isFinite(start) ? start : upper - 1, upper);
   }
   if (bound !== null) {
-    const end = Math.max(most, bound + (Math.abs(bound) || 1) / 10);
-    return linear(bound, end);
+    const inside = Math.max(most - bound, (Math.abs(bound) || 1) / 10);
+    // Room to show how far below a piece is, unless that would crowd the good ones into the limit.
+    const below = Number.isFinite(least) ? Math.max(0, bound - least) * 3.4 : 0;
+    return linear(bound, bound + Math.max(inside, Math.min(below, inside * 4)));
   }
   return Number.isFinite(least) && most > least ? linear(least, most) : () => (frame.left + frame.right) / 2;
 }

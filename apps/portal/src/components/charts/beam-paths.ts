@@ -4,11 +4,13 @@ import { frame, type Beam } from './beam-geometry.ts';
 
 const { line, dot } = frame;
 
+const short = (x: number) => Math.round(x * 10) / 10;
+
 /** Filled circles. */
 export function dotsPath(xs: readonly number[], radius: number = dot, y: number = line): string {
+  const arcs = `a${radius} ${radius} 0 1 0 ${2 * radius} 0a${radius} ${radius} 0 1 0-${2 * radius} 0`;
   let path = '';
-  for (const x of xs)
-    path += `M${x - radius} ${y}a${radius} ${radius} 0 1 0 ${2 * radius} 0a${radius} ${radius} 0 1 0-${2 * radius} 0`;
+  for (const x of xs) path += `M${short(x - radius)} ${y}${arcs}`;
   return path;
 }
 
@@ -49,7 +51,7 @@ export function hatchPath(bands: Beam['guards']): string {
     const lean = Math.min(4, width);
     const lines = Math.max(1, Math.floor((width - lean) / 3) + 1);
     for (let i = 0; i < lines; i += 1)
-      path += `M${Math.round((from + i * 3) * 10) / 10} ${line + 4}l${lean}-8`;
+      path += `M${short(from + i * 3)} ${line + 4}l${lean}-8`;
   }
   return path;
 }

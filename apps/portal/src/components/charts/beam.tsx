@@ -67,7 +67,9 @@ function MeasuredBeam(data: BeamWordsData) {
       {beam.outside.length > 0 && (
         <>
           <path d={diamondsPath(beam.outside)} className="fill-vermilion" />
-          <path d={arrowsPath(beam.outside)} className="fill-none stroke-vermilion" strokeWidth={1.5} />
+          {beam.outside.some((mark) => mark.beyond !== null) && (
+            <path d={arrowsPath(beam.outside)} className="fill-none stroke-vermilion" strokeWidth={1.5} />
+          )}
         </>
       )}
       {beam.unmeasured > 0 && <Unmeasured count={beam.unmeasured} />}

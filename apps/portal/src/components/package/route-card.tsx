@@ -122,7 +122,7 @@ function StationCell({ mark, past }: { mark: StationMark; past?: boolean | undef
         {!inHand && mark.who && <p>{mark.who}</p>}
         {mark.at && (
           <p className="text-pencil">
-            <Moment at={mark.at} />
+            <Moment at={mark.at} wrap />
           </p>
         )}
         {mark.note && <p className="text-pencil">{mark.note}</p>}

@@ -28,7 +28,7 @@ export function SignaturePair({ warrant, disposition }: SignaturePairProps) {
 
 export function SignatureField({ title, signature, unsigned }: SignatureFieldProps) {
   return (
-    <div className="flex min-w-0 flex-col border-2 border-double border-graphite bg-sheet p-3">
+    <div className="flex min-w-0 flex-col border-4 border-double border-graphite bg-sheet p-3">
       <p className="caption">{title}</p>
       {signature === null ? (
         <div className="flex min-h-28 flex-1 flex-col justify-end">

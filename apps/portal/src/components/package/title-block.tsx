@@ -52,7 +52,9 @@ export function TitleBlock(props: TitleBlockProps) {
         <Cell caption="Level" mono>
           {props.level}
         </Cell>
-        <Cell caption="Due">{props.due}</Cell>
+        <Cell caption="Due" className="max-sm:col-span-2">
+          {props.due}
+        </Cell>
       </dl>
     </div>
   );

@@ -22,7 +22,7 @@ export function buttonLook(
   extra?: string,
 ): string {
   return cn(
-    'inline-flex items-center justify-center gap-2 rounded border leading-tight font-medium no-underline select-none',
+    'inline-flex max-w-full shrink-0 items-center justify-center gap-2 rounded border leading-tight font-medium no-underline select-none',
     'disabled:cursor-not-allowed disabled:border-rule disabled:bg-transparent disabled:text-pencil',
     weights[weight],
     sizes[size],

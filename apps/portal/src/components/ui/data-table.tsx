@@ -137,8 +137,8 @@ function FilledTable<Row extends object>({
                       sorted ? (sorted === 'asc' ? 'ascending' : 'descending') : sortable ? 'none' : undefined
                     }
                     className={cn(
-                      'h-row px-3 text-start align-bottom text-[0.8125rem] font-semibold',
-                      column?.align === 'end' && 'text-end',
+                      'h-row px-3 align-bottom text-[0.8125rem] font-semibold',
+                      column?.align === 'end' ? 'text-end' : 'text-start',
                       column?.from && hideBelow[column.from],
                       column?.width,
                     )}

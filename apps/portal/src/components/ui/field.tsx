@@ -20,7 +20,7 @@ export interface ControlAttributes {
 
 export const controlLook =
   'w-full min-h-8 rounded border border-pencil bg-sheet px-2 py-1 text-graphite placeholder:text-pencil pointer-coarse:min-h-10 ' +
-  'aria-invalid:border-vermilion aria-invalid:border-2 disabled:border-rule disabled:text-pencil read-only:border-rule';
+  'aria-invalid:border-vermilion aria-invalid:border-2 disabled:border-rule disabled:text-pencil [&[readonly]]:border-rule';
 
 /** Label, hint and error around one control; the error stands directly under its cause. */
 export function Field({

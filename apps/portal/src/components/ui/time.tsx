@@ -1,10 +1,14 @@
 import { showDay, showDue, showMoment, showMomentWithZone, daysUntil } from '../../lib/format.ts';
 import { cn } from '../../lib/cn.ts';
 
-/** A moment in the reader's zone; the zone and UTC on hover and in print. */
-export function Moment({ at }: { at: string }) {
+/** A moment in the reader's zone; the zone and UTC on hover. */
+export function Moment({ at, wrap }: { at: string; wrap?: boolean }) {
   return (
-    <time dateTime={at} title={showMomentWithZone(at)} className="figures whitespace-nowrap">
+    <time
+      dateTime={at}
+      title={showMomentWithZone(at)}
+      className={cn('figures', !wrap && 'whitespace-nowrap')}
+    >
       {showMoment(at)}
     </time>
   );
