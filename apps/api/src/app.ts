@@ -24,6 +24,9 @@ import { measurementsRoutes } from './features/measurements/measurements.routes.
 import { submissionReviewRoutes } from './features/submission-review/submission-review.routes.ts';
 import { warrantsRoutes } from './features/warrants/warrants.routes.ts';
 import { characteristicsRoutes } from './features/characteristics/characteristics.routes.ts';
+import { sweepTableImports } from './features/table-imports/hold-file.ts';
+import { tableExportsRoutes } from './features/table-imports/table-exports.routes.ts';
+import { tableImportsRoutes } from './features/table-imports/table-imports.routes.ts';
 import { partsRoutes } from './features/parts/parts.routes.ts';
 import { documentsRoutes } from './features/documents/documents.routes.ts';
 import { organisationsRoutes } from './features/organisations/organisations.routes.ts';
@@ -125,6 +128,8 @@ export function createApp(dependencies: Dependencies): App {
   organisationsRoutes(router);
   partsRoutes(router);
   characteristicsRoutes(router);
+  tableExportsRoutes(router);
+  tableImportsRoutes(router);
   requestsRoutes(router);
   submissionsRoutes(router);
   evidenceRoutes(router);
@@ -158,6 +163,7 @@ export function createApp(dependencies: Dependencies): App {
       everySeconds: 600,
       work: async () => void (await runInterimClock({ db, clock, publicUrl: config.publicUrl })),
     },
+    { name: 'unconfirmed imports', everySeconds: 3600, work: () => sweepTableImports(db, clock) },
     { name: 'old keys', everySeconds: 3600, work: () => sweepKeys(core) },
   ];
   return {

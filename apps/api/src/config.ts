@@ -69,6 +69,9 @@ export interface Config {
   readonly secrets: { readonly session: Buffer; readonly audit: Buffer; readonly signingKeyPem: string };
 }
 
+/** Of every invented person of the demonstration, which never runs in production. */
+export const demoPassword = 'brass scribes on blue layout';
+
 export class ConfigError extends Error {}
 
 /** Reads the environment. Throws `ConfigError` with every fault named, so that a start fails loudly and whole. */

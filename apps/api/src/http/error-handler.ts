@@ -46,6 +46,8 @@ function writeProblem(res: Response, problem: ProblemError, requestId: string): 
   };
   for (const [name, value] of Object.entries(problem.headers ?? {})) res.setHeader(name, value);
   if (problem.retryAfter !== undefined) res.setHeader('Retry-After', String(problem.retryAfter));
+  // The rest of a body that is too large is not waited for.
+  if (problem.status === 413) res.setHeader('Connection', 'close');
   res.removeHeader('ETag');
   res.removeHeader('Content-Disposition');
   res.status(problem.status);

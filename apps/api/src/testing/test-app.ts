@@ -12,6 +12,7 @@ import { ordinaryLimits, type RateLimitSettings } from '../http/rate-limits.ts';
 import { createLogger } from '../http/request-log.ts';
 import { FileStore } from '../storage/file-store.ts';
 import { fakeClock, type FakeClock } from './fake-clock.ts';
+import { catchingTransport, type CatchingTransport } from './catching-transport.ts';
 import { testBucket, testStore } from './test-store.ts';
 
 export interface TestApp extends App {
@@ -19,6 +20,8 @@ export interface TestApp extends App {
   readonly clock: FakeClock;
   readonly db: Database;
   readonly store: FileStore;
+  /** Takes what the relay sends. */
+  readonly transport: CatchingTransport;
   readonly server: Server;
   readonly url: string;
   /** Lines of the log, for what must or must not stand in it. */
@@ -59,12 +62,14 @@ export async function createTestApp(options: TestAppOptions = {}): Promise<TestA
   const logLines: string[] = [];
   const db = await openDatabase(file, { migrate: false });
   const store = new FileStore(config.s3);
+  const transport = catchingTransport();
   const app = createApp({
     config,
     clock,
     log: createLogger('debug', { write: (line) => void logLines.push(line) }),
     db,
     store,
+    transport,
     rateLimits: { ...ordinaryLimits, enabled: false, ...options.limits },
     checkEveryAnswer: true,
   });
@@ -78,5 +83,5 @@ export async function createTestApp(options: TestAppOptions = {}): Promise<TestA
   };
   if ((options.closes ?? 'test') === 'test') onTestFinished(close);
   const mails = () => db.reader.query<OutboxMail[]>('SELECT * FROM outbox_mails ORDER BY created_at, rowid');
-  return { ...app, config, clock, db, store, server, url, logLines, mails, close };
+  return { ...app, config, clock, db, store, transport, server, url, logLines, mails, close };
 }

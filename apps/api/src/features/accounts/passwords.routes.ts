@@ -15,7 +15,7 @@ export function passwordsRoutes(router: ApiRouter): void {
   const { hashing } = router.core;
 
   route(router, {
-    method: 'post',
+    method: 'put',
     path: '/account/password',
     permission: 'signed-in',
     summary: 'Change your password',
@@ -47,21 +47,15 @@ export function passwordsRoutes(router: ApiRouter): void {
     handler: ({ deed, params }) => readToken(deed.reader, params.token, deed.now),
   });
 
-  for (const [path, kind] of [
-    ['/password-resets/:token', 'password-reset'],
-    ['/invitations/:token', 'invitation'],
-  ] as const) {
-    route(router, {
-      method: 'post',
-      path,
-      permission: 'public',
-      summary: kind === 'invitation' ? 'Accept an invitation by choosing a password' : 'Set a new password',
-      params: tokenParams,
-      body: setPasswordRequest,
-      response: 'nothing',
-      limit,
-      handler: ({ deed, params, body }) =>
-        setPasswordByToken(deed, hashing, kind, params.token, body.newPassword),
-    });
-  }
+  route(router, {
+    method: 'post',
+    path: '/account-tokens/:token/password',
+    permission: 'public',
+    summary: 'Choose a password: accepts an invitation or ends a reset',
+    params: tokenParams,
+    body: setPasswordRequest,
+    response: 'nothing',
+    limit,
+    handler: ({ deed, params, body }) => setPasswordByToken(deed, hashing, params.token, body.newPassword),
+  });
 }

@@ -87,27 +87,21 @@ export async function readToken(
 export async function setPasswordByToken(
   deed: PublicDeed,
   hashing: Hashing,
-  kind: TokenKind,
   secret: string,
   newPassword: string,
 ): Promise<void> {
-  const { user } = await findToken(deed.reader.manager, secret, deed.now, kind);
+  const { user } = await findToken(deed.reader.manager, secret, deed.now);
   const hash = await hashed(hashing, newPassword, [user.name, user.email, user.organisation.name]);
   await deed.transact(async (manager) => {
-    const found = await findToken(manager, secret, deed.now, kind);
+    const found = await findToken(manager, secret, deed.now);
     await manager.update(AccountToken, { id: found.token.id }, { usedAt: deed.now });
     await settle(manager, deed, found.user, hash);
   });
 }
 
-async function findToken(manager: EntityManager, secret: string, now: string, kind?: TokenKind) {
+async function findToken(manager: EntityManager, secret: string, now: string) {
   const token = await manager.findOne(AccountToken, {
-    where: {
-      tokenHash: hashOfToken(secret),
-      usedAt: IsNull(),
-      expiresAt: MoreThan(now),
-      ...(kind && { kind }),
-    },
+    where: { tokenHash: hashOfToken(secret), usedAt: IsNull(), expiresAt: MoreThan(now) },
     relations: { user: { organisation: true } },
   });
   if (!token || token.user.disabledAt !== null)

@@ -33,11 +33,16 @@ describe('an invitation', () => {
     const visitor = anonymous(app);
     const state = await visitor.get(`/api/account-tokens/${token}`).expect(200);
     expect(state.body).toMatchObject({ kind: 'invitation', name: 'Lin Okara' });
-    await visitor.post(`/api/password-resets/${token}`).send({ newPassword: strong }).expect(404);
-    await visitor.post(`/api/invitations/${token}`).send({ newPassword: 'too short 1234' }).expect(422);
-    await visitor.post(`/api/invitations/${token}`).send({ newPassword: 'lin okara lin okara' }).expect(422);
-    await visitor.post(`/api/invitations/${token}`).send({ newPassword: strong }).expect(204);
-    await visitor.post(`/api/invitations/${token}`).send({ newPassword: strong }).expect(404);
+    await visitor
+      .post(`/api/account-tokens/${token}/password`)
+      .send({ newPassword: 'too short 1234' })
+      .expect(422);
+    await visitor
+      .post(`/api/account-tokens/${token}/password`)
+      .send({ newPassword: 'lin okara lin okara' })
+      .expect(422);
+    await visitor.post(`/api/account-tokens/${token}/password`).send({ newPassword: strong }).expect(204);
+    await visitor.post(`/api/account-tokens/${token}/password`).send({ newPassword: strong }).expect(404);
     await visitor.post('/api/session').send({ email: 'lin@works.example', password: strong }).expect(201);
     const people = await administrator.get('/api/people').expect(200);
     expect(people.body.items).toContainEqual(expect.objectContaining({ name: 'Lin Okara', state: 'active' }));
@@ -64,7 +69,7 @@ describe('an invitation', () => {
       .send({ ...invitation, email: known.email })
       .expect(201);
     await anonymous(app)
-      .post(`/api/invitations/${await tokenIn(app)}`)
+      .post(`/api/account-tokens/${await tokenIn(app)}/password`)
       .send({ newPassword: strong })
       .expect(204);
     const enter = (password: string) =>
@@ -127,7 +132,7 @@ describe('a password', () => {
     expect(mail?.text).toContain(`${app.url}/password-reset/`);
     const token = await tokenIn(app);
     await reviewer.get('/api/session').expect(200);
-    await visitor.post(`/api/password-resets/${token}`).send({ newPassword: strong }).expect(204);
+    await visitor.post(`/api/account-tokens/${token}/password`).send({ newPassword: strong }).expect(204);
     await reviewer.get('/api/session').expect(401);
     const enter = (password: string) =>
       visitor.post('/api/session').send({ email: cast.reviewer.email, password });
@@ -137,7 +142,7 @@ describe('a password', () => {
     await visitor.post('/api/password-resets').send({ email: cast.reviewer.email }).expect(204);
     app.clock.advance(HOUR);
     await visitor
-      .post(`/api/password-resets/${await tokenIn(app)}`)
+      .post(`/api/account-tokens/${await tokenIn(app)}/password`)
       .send({ newPassword: strong })
       .expect(404);
   });
@@ -146,7 +151,7 @@ describe('a password', () => {
     const { app, cast } = await scene();
     const [here, there] = await Promise.all([signInAs(app, cast.reviewer), signInAs(app, cast.reviewer)]);
     const send = (currentPassword: string) =>
-      here.post('/api/account/password').send({ currentPassword, newPassword: strong });
+      here.put('/api/account/password').send({ currentPassword, newPassword: strong });
     const refused = await send('not the password at all').expect(422);
     expect(refused.body.errors[0].pointer).toBe('/currentPassword');
     await send(testPassword).expect(204);

@@ -1,7 +1,7 @@
 import { auditQuery, auditResponse, auditVerification } from '@trammel/shared/audit';
 import type { AuditAnchors } from '../../database/audit-anchors.ts';
 import type { ApiRouter } from '../../http/api-router.ts';
-import { readCursor, writeCursor } from '../../http/cursor.ts';
+import { decodeCursor, encodeCursor } from '../../http/keyset.ts';
 import { route } from '../../http/route.ts';
 import { presentAuditEvent } from './audit.presenter.ts';
 import { findAuditEvents } from './audit.queries.ts';
@@ -16,23 +16,24 @@ export function auditRoutes(router: ApiRouter, anchors: AuditAnchors): void {
     query: auditQuery,
     response: auditResponse,
     handler: async ({ deed, query: { cursor, limit, ...filter } }) => {
-      const before = cursor === undefined ? Number.MAX_SAFE_INTEGER : Number(readCursor(cursor, 1)[0]);
+      const place = decodeCursor(cursor, 'newest');
+      const before = place === null ? Number.MAX_SAFE_INTEGER : Number(place.value);
       const rows = findAuditEvents(deed.reader, deed.actor.organisationId, {
         ...filter,
         before,
         limit: limit + 1,
       });
-      if (cursor === undefined) await recordReading(deed, filter);
+      if (place === null) await recordReading(deed, filter);
       const last = rows.length > limit ? rows[limit - 1] : undefined;
       return {
         items: rows.slice(0, limit).map(presentAuditEvent),
-        nextCursor: last ? writeCursor([last.organisationSequence]) : null,
+        nextCursor: last ? encodeCursor('newest', { value: last.organisationSequence, id: '' }) : null,
       };
     },
   });
 
   route(router, {
-    method: 'post',
+    method: 'get',
     path: '/audit/verification',
     permission: 'audit:read',
     summary: 'Check that nothing in the trail was changed or removed',
