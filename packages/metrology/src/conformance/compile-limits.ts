@@ -51,10 +51,15 @@ export interface Zone {
 /** Largest scale and number of digits handled by plain integers; beyond, BigInt decides. */
 export const FAST_DIGITS = 15;
 
-/** A zone as integers: at scale s a reading of m units is inside when low[s] ≤ m ≤ high[s]. */
-export interface ScaledZone {
-  readonly low: Float64Array;
-  readonly high: Float64Array;
+/**
+ * The zones as integers at one scale: a reading of m units is accepted when acceptLow ≤ m ≤ acceptHigh, and refused
+ * when m < possibleLow or m > possibleHigh.
+ */
+export interface ScaledBounds {
+  readonly acceptLow: number;
+  readonly acceptHigh: number;
+  readonly possibleLow: number;
+  readonly possibleHigh: number;
 }
 
 /**
@@ -70,8 +75,8 @@ export interface CompiledLimits {
   readonly acceptEmpty: boolean;
   /** Decimals readings are rounded to, null with absolute limits. */
   readonly roundingPlaces: number | null;
-  readonly fastAccept: ScaledZone;
-  readonly fastPossible: ScaledZone;
+  /** Integer bounds by scale, made when a reading of that scale is first met. */
+  readonly scaled: (ScaledBounds | undefined)[];
 }
 
 function scaledBound(bound: Bound | null, scale: number, side: 'low' | 'high'): number {
@@ -92,14 +97,21 @@ function scaledBound(bound: Bound | null, scale: number, side: 'low' | 'high'): 
   return Number(threshold);
 }
 
-function scaledZone(zone: Zone): ScaledZone {
-  const low = new Float64Array(FAST_DIGITS + 1);
-  const high = new Float64Array(FAST_DIGITS + 1);
-  for (let scale = 0; scale <= FAST_DIGITS; scale += 1) {
-    low[scale] = scaledBound(zone.low, scale, 'low');
-    high[scale] = scaledBound(zone.high, scale, 'high');
-  }
-  return { low, high };
+/** The integer bounds for readings with `scale` decimals, 0 to 15. */
+export function boundsAtScale(compiled: CompiledLimits, scale: number): ScaledBounds {
+  const known = compiled.scaled[scale];
+  if (known !== undefined) return known;
+  const { accept, possible, acceptEmpty } = compiled;
+  const acceptLow = acceptEmpty ? Infinity : scaledBound(accept.low, scale, 'low');
+  const acceptHigh = acceptEmpty ? -Infinity : scaledBound(accept.high, scale, 'high');
+  const bounds = {
+    acceptLow,
+    acceptHigh,
+    possibleLow: scaledBound(possible.low, scale, 'low'),
+    possibleHigh: scaledBound(possible.high, scale, 'high'),
+  };
+  compiled.scaled[scale] = bounds;
+  return bounds;
 }
 
 const inclusive = (value: Decimal | null): Bound | null =>
@@ -196,11 +208,6 @@ export function compileLimits(
     high: banded.high ?? inclusive(read.naturalUpper),
   };
   const acceptEmpty = (read.lower === null && read.upper === null) || isEmpty(accept);
-  const fastAccept = scaledZone(accept);
-  if (acceptEmpty) {
-    fastAccept.low.fill(Infinity);
-    fastAccept.high.fill(-Infinity);
-  }
   return {
     limits: read,
     rule,
@@ -208,7 +215,6 @@ export function compileLimits(
     possible,
     acceptEmpty,
     roundingPlaces: places,
-    fastAccept,
-    fastPossible: scaledZone(possible),
+    scaled: [],
   };
 }

@@ -1,11 +1,11 @@
 import { parseDecimal } from '../decimal/parse-decimal.ts';
 import type { Undetermined } from '../result.ts';
-import { compileLimits, FAST_DIGITS, SIMPLE_ACCEPTANCE } from './compile-limits.ts';
+import { boundsAtScale, compileLimits, FAST_DIGITS, SIMPLE_ACCEPTANCE } from './compile-limits.ts';
 import type { CompiledLimits, DecisionRule } from './compile-limits.ts';
 import { classifyDecimal } from './judge-reading.ts';
 import type { Limits } from './limits.ts';
 import { ReadingStore, summarise } from './sample-summary.ts';
-import { VERDICT_CODE } from './verdict.ts';
+import { VERDICT_CODE, VERDICTS } from './verdict.ts';
 import type { Verdict } from './verdict.ts';
 
 /** A text that is no reading, at its place (from 0) in the list. */
@@ -39,6 +39,13 @@ export interface SampleEvaluation {
   readonly naturalSpread: { readonly lower: number; readonly upper: number } | null;
 }
 
+/** Readings below this many units are handled as plain integers. */
+const FAST_END = 10 ** FAST_DIGITS;
+
+function codeOf(verdict: Verdict): number {
+  return VERDICTS.indexOf(verdict);
+}
+
 function worstOf(out: number, undecided: number, accepted: number, total: number): Verdict {
   if (out > 0) return 'out-of-tolerance';
   if (undecided > 0) return 'undecided';
@@ -55,15 +62,15 @@ export function evaluateCompiled(
   const total = texts.length;
   const verdicts = new Uint8Array(total);
   const store = new ReadingStore(total);
-  const { units, scales, indexes } = store;
-  const { low: acceptLow, high: acceptHigh } = compiled.fastAccept;
-  const { low: possibleLow, high: possibleHigh } = compiled.fastPossible;
+  const { units, scales } = store;
   const refused: RefusedReading[] = [];
   const outIndexes: number[] = [];
   let missing = 0;
   let undecided = 0;
   let count = 0;
   let largestScale = 0;
+  let boundScale = -1;
+  let bounds = boundsAtScale(compiled, 0);
 
   for (let index = 0; index < total; index += 1) {
     const text = texts[index] ?? null;
@@ -72,55 +79,65 @@ export function evaluateCompiled(
       continue;
     }
     const length = text.length;
-    let at = 0;
     let magnitude = 0;
-    let point = -1;
+    let figures = 0;
+    let scale = 0;
     let negative = false;
-    if (length <= FAST_DIGITS + 2) {
+    let plain = length <= FAST_DIGITS + 2;
+    if (plain) {
+      let at = 0;
+      let point = -1;
       const first = text.charCodeAt(0);
       if (first === 0x2d || first === 0x2b) {
         at = 1;
         negative = first === 0x2d;
       }
+      figures = length - at;
       for (; at < length; at += 1) {
         const figure = text.charCodeAt(at) - 48;
         if (figure >= 0 && figure <= 9) magnitude = magnitude * 10 + figure;
         else if (figure === -2 && point < 0) point = at;
         else break;
       }
+      if (point >= 0) {
+        figures -= 1;
+        scale = length - point - 1;
+      }
+      plain = at === length && figures > 0 && figures <= FAST_DIGITS;
     }
-    const start = length > 0 && (negative || text.charCodeAt(0) === 0x2b) ? 1 : 0;
-    const figures = length - start - (point < 0 ? 0 : 1);
-    let code: number;
-    if (at === length && figures > 0 && figures <= FAST_DIGITS) {
-      const scale = point < 0 ? 0 : length - point - 1;
-      const reading = negative ? 0 - magnitude : magnitude;
-      units[count] = reading;
-      scales[count] = scale;
-      if (scale > largestScale) largestScale = scale;
-      if (reading >= (acceptLow[scale] ?? NaN) && reading <= (acceptHigh[scale] ?? NaN))
-        code = VERDICT_CODE.inTolerance;
-      else if (reading < (possibleLow[scale] ?? NaN) || reading > (possibleHigh[scale] ?? NaN))
-        code = VERDICT_CODE.outOfTolerance;
-      else code = VERDICT_CODE.undecided;
-    } else {
+    if (!plain) {
       const value = parseDecimal(text);
       if ('undetermined' in value) {
         refused.push({ index, code: value.code, reason: value.reason });
         continue;
       }
-      store.long.set(count, value);
-      const verdict = classifyDecimal(value, compiled);
-      code =
-        verdict === 'in-tolerance'
-          ? VERDICT_CODE.inTolerance
-          : verdict === 'undecided'
-            ? VERDICT_CODE.undecided
-            : VERDICT_CODE.outOfTolerance;
+      negative = value.digits < 0n;
+      magnitude = Math.abs(Number(value.digits));
+      scale = value.scale;
+      if (magnitude >= FAST_END || scale > FAST_DIGITS) {
+        store.long.set(count, value);
+        verdicts[index] = codeOf(classifyDecimal(value, compiled));
+      } else plain = true;
     }
-    verdicts[index] = code;
-    indexes[count] = index;
+    if (plain) {
+      const reading = negative ? 0 - magnitude : magnitude;
+      units[count] = reading;
+      scales[count] = scale;
+      if (scale !== boundScale) {
+        if (boundScale >= 0) store.sameScale = false;
+        boundScale = scale;
+        bounds = boundsAtScale(compiled, scale);
+        if (scale > largestScale) largestScale = scale;
+      }
+      verdicts[index] =
+        reading >= bounds.acceptLow && reading <= bounds.acceptHigh
+          ? VERDICT_CODE.inTolerance
+          : reading < bounds.possibleLow || reading > bounds.possibleHigh
+            ? VERDICT_CODE.outOfTolerance
+            : VERDICT_CODE.undecided;
+    }
     count += 1;
+    const code = verdicts[index];
     if (code === VERDICT_CODE.outOfTolerance) outIndexes.push(index);
     else if (code === VERDICT_CODE.undecided) undecided += 1;
   }

@@ -39,6 +39,7 @@ describe('standard tolerances', () => {
     expect(standardTolerance('0', 'IT7')).toMatchObject({ code: 'outside-table' });
     expect(standardTolerance('-5', 'IT7')).toMatchObject({ code: 'outside-table' });
     expect(standardTolerance('25', 'IT19')).toMatchObject({ code: 'class-not-given' });
+    expect(standardTolerance('25', 'IT12.5')).toMatchObject({ code: 'class-not-given' });
     expect(standardTolerance('x', 'IT7')).toMatchObject({ code: 'not-a-number' });
   });
 

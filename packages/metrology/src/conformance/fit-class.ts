@@ -53,7 +53,13 @@ function upToOne(size: Decimal): boolean {
 /** All deviations below are integers in tenths of a micrometre, doubled where IT/2 needs it: here 0.05 µm. */
 const PER_MICROMETRE = 20;
 
+/** From IT12 to IT18 a grade is ten times the grade five before it (ISO 286-1:2010). */
 function gradeTolerance(size: Decimal, grade: string): number | null {
+  const rank = Number(grade);
+  if (rank > 11 && rank <= 18) {
+    const finer = gradeTolerance(size, String(rank - 5));
+    return finer === null ? null : 10 * finer;
+  }
   const tenths = STANDARD_TOLERANCES[grade]?.[rangeOf(SIZE_RANGES, size)];
   return tenths === undefined ? null : tenths * 2;
 }

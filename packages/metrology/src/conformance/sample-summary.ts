@@ -9,15 +9,14 @@ const POWERS = Float64Array.from({ length: FAST_DIGITS + 1 }, (_, exponent) => 1
 export class ReadingStore {
   readonly units: Float64Array;
   readonly scales: Uint8Array;
-  readonly indexes: Uint32Array;
   readonly long = new Map<number, Decimal>();
   count = 0;
   largestScale = 0;
+  sameScale = true;
 
   constructor(capacity: number) {
     this.units = new Float64Array(capacity);
     this.scales = new Uint8Array(capacity);
-    this.indexes = new Uint32Array(capacity);
   }
 
   exact(position: number): Decimal {
@@ -38,16 +37,18 @@ export interface Summary {
   standardDeviation: number | null;
 }
 
-/** Scales all readings to one scale in place; false when one of them would leave the safe integers. */
-function alignScales(store: ReadingStore): boolean {
+/** All readings as integers at the largest scale, or null when one of them would leave the safe integers. */
+function alignedUnits(store: ReadingStore): Float64Array | null {
   const { units, scales, count, largestScale } = store;
-  if (store.long.size > 0) return false;
+  if (store.long.size > 0) return null;
+  if (store.sameScale) return units;
+  const aligned = new Float64Array(count);
   for (let position = 0; position < count; position += 1) {
-    const lift = largestScale - (scales[position] ?? 0);
-    if (lift > 0 && Math.abs((units[position] ?? 0) * (POWERS[lift] ?? NaN)) > Number.MAX_SAFE_INTEGER)
-      return false;
+    const lifted = (units[position] ?? 0) * (POWERS[largestScale - (scales[position] ?? 0)] ?? 1);
+    if (Math.abs(lifted) > Number.MAX_SAFE_INTEGER) return null;
+    aligned[position] = lifted;
   }
-  return true;
+  return aligned;
 }
 
 /**
@@ -55,20 +56,17 @@ function alignScales(store: ReadingStore): boolean {
  * the deviations start from exact numbers however large the readings are.
  */
 function summariseIntegers(store: ReadingStore): Summary | null {
-  if (!alignScales(store)) return null;
-  const { units, scales, count, largestScale } = store;
-  const lifted = (position: number) =>
-    (units[position] ?? 0) * (POWERS[largestScale - (scales[position] ?? 0)] ?? 1);
-  const origin = lifted(0);
-  const differences = new Float64Array(count);
+  const aligned = alignedUnits(store);
+  if (aligned === null) return null;
+  const { count, largestScale } = store;
+  const origin = aligned[0] ?? 0;
   let low = 0;
   let high = 0;
   let lowest = 0;
   let highest = 0;
   let sum = 0;
   for (let position = 0; position < count; position += 1) {
-    const difference = lifted(position) - origin;
-    differences[position] = difference;
+    const difference = (aligned[position] ?? 0) - origin;
     sum += difference;
     if (difference < lowest) {
       lowest = difference;
@@ -82,7 +80,7 @@ function summariseIntegers(store: ReadingStore): Summary | null {
   const centre = sum / count;
   let squares = 0;
   for (let position = 0; position < count; position += 1) {
-    const deviation = (differences[position] ?? 0) - centre;
+    const deviation = (aligned[position] ?? 0) - origin - centre;
     squares += deviation * deviation;
   }
   const unit = powerOfTen(largestScale);
