@@ -4,3 +4,5 @@ export * from './decimal/index.ts';
 export * from './units/index.ts';
 export * from './conformance/index.ts';
 export * from './sampling/index.ts';
+export * from './distributions/index.ts';
+export * from './statistics/index.ts';
