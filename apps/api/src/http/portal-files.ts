@@ -31,7 +31,8 @@ export function portalFiles(folder: string): Router {
     }),
   );
   router.get('/{*any}', (req, res, next) => {
-    if (req.path.startsWith('/api/') || req.path === '/api') {
+    // An address with a dot asks for a file, and the file is not there.
+    if (req.path.startsWith('/api/') || req.path === '/api' || /\.[^/]*$/.test(req.path)) {
       next();
       return;
     }

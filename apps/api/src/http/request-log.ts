@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import type { IncomingMessage, ServerResponse } from 'node:http';
 import type { RequestHandler } from 'express';
 import { pino, type DestinationStream, type Logger } from 'pino';
 import { pinoHttp } from 'pino-http';
@@ -39,17 +40,22 @@ export function requestLog(log: Logger): RequestHandler {
     customLogLevel: (_req, res) => (res.statusCode >= 500 ? 'error' : 'info'),
     customSuccessMessage: () => 'request',
     customErrorMessage: () => 'request',
-    customProps: (req, res) => {
-      const locals = (res as unknown as { locals?: { route?: string; actor?: Caller } }).locals;
-      return {
-        method: req.method,
-        route: locals?.route,
-        status: res.statusCode,
-        actor: locals?.actor?.userId,
-        organisation: locals?.actor?.organisationId,
-      };
-    },
+    customAttributeKeys: { reqId: 'requestId' },
+    customSuccessObject: (req, res, given: object) => ({ ...given, ...outcome(req, res) }),
+    customErrorObject: (req, res, _error, given: object) => ({ ...given, ...outcome(req, res) }),
   }) as RequestHandler;
+}
+
+/** Written when the answer is complete, so that route and actor are known. */
+function outcome(req: IncomingMessage, res: ServerResponse) {
+  const locals = (res as { locals?: { route?: string; actor?: Caller } }).locals;
+  return {
+    method: req.method,
+    route: locals?.route,
+    status: res.statusCode,
+    actor: locals?.actor?.userId,
+    organisation: locals?.actor?.organisationId,
+  };
 }
 
 interface Caller {
