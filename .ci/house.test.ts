@@ -59,8 +59,9 @@ describe('what is written', () => {
   });
 
   it('carries no style or handler inside markup, which the content policy refuses', () => {
-    expect(places(others, /<[a-z][^>]*\s(style|on[a-z]+)="/)).toEqual([]);
-    expect(places(others, /dangerouslySetInnerHTML|\.(inner|outer)HTML\s*=/)).toEqual([]);
+    const product = others.filter((file) => !file.test);
+    expect(places(product, /<[a-z][^>]*\s(style|on[a-z]+)="/)).toEqual([]);
+    expect(places(product, /dangerouslySetInnerHTML|\.(inner|outer)HTML\s*=/)).toEqual([]);
   });
 
   it('takes its colours from the tokens', () => {

@@ -37,8 +37,9 @@ export const roomMayImport = {
     evidence: ['config', 'database', 'http'],
     features: ['config', 'database', 'http', 'storage', 'mail', 'tables', 'evidence'],
     demo: ['config'],
+    seed: ['config', 'database', 'http', 'storage', 'evidence', 'features'],
     app: ['config', 'database', 'http', 'storage', 'mail', 'tables', 'evidence', 'features'],
-    main: ['config', 'database', 'http', 'storage', 'mail', 'tables', 'evidence', 'features', 'app'],
+    main: ['config', 'database', 'http', 'storage', 'mail', 'tables', 'evidence', 'features', 'app', 'seed'],
   },
   portal: {
     lib: [],

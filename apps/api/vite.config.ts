@@ -23,6 +23,7 @@ export default {
     rollupOptions: {
       input: {
         main: join(source, 'main.ts'),
+        'demo/services': join(source, 'demo/services.ts'),
         ...Object.fromEntries(workers.map((file) => [basename(file, '.ts'), join(source, file)])),
       },
       // Side by side, because the main bundle looks for its workers in its own folder.
