@@ -3,6 +3,7 @@ import { spawn } from 'node:child_process';
 import { createServer } from 'node:net';
 import { dirname } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { stripVTControlCharacters } from 'node:util';
 
 export const top = dirname(dirname(fileURLToPath(import.meta.url)));
 
@@ -38,7 +39,11 @@ export function run(command, args, { env = process.env, quiet = false, limitMs =
       : undefined;
     const done = (/** @type {number} */ code) => {
       clearTimeout(timer);
-      resolve({ code, output, seconds: (performance.now() - started) / 1000 });
+      resolve({
+        code,
+        output: stripVTControlCharacters(output),
+        seconds: (performance.now() - started) / 1000,
+      });
     };
     child.once('error', (error) => {
       output += `${error.message}\n`;
