@@ -1,16 +1,5 @@
+import { GAUSS_RULE } from './gauss-rule.ts';
 import { normalDensity, normalUpperTail } from './normal.ts';
-
-/** Nodes and weights of the 16-point Gauss-Legendre rule on (0, 1), half of them: the rule is symmetric. */
-const GAUSS: readonly (readonly [number, number])[] = [
-  [0.09501250983763744, 0.1894506104550685],
-  [0.2816035507792589, 0.1826034150449236],
-  [0.45801677765722737, 0.16915651939500254],
-  [0.6178762444026438, 0.14959598881657674],
-  [0.755404408355003, 0.12462897125553388],
-  [0.8656312023878318, 0.09515851168249279],
-  [0.9445750230732326, 0.062253523938647894],
-  [0.9894009349916499, 0.02715245941175409],
-];
 
 /** Φ(z) − Φ(z − x) for x ≥ 0 to all its digits: by quadrature of the density where the difference would cancel. */
 function normalBetween(z: number, x: number): number {
@@ -18,7 +7,7 @@ function normalBetween(z: number, x: number): number {
     const half = x / 2;
     const middle = z - half;
     let sum = 0;
-    for (const [node, weight] of GAUSS)
+    for (const [node, weight] of GAUSS_RULE)
       sum += weight * (normalDensity(middle - half * node) + normalDensity(middle + half * node));
     return sum * half;
   }

@@ -1,0 +1,2 @@
+export { c4, chartConstants, d2, d3 } from './constants.ts';
+export type { ChartConstants } from './constants.ts';
