@@ -116,17 +116,18 @@ export async function announce(address, mailPage, dataDir, apiAddress = address)
  */
 export async function runProduct(begin) {
   const family = createFamily();
-  let ending = false;
+  let endingSince = 0;
   /** @param {number} code @param {string} [reason] */
   const end = async (code, reason) => {
-    if (ending) return;
-    ending = true;
+    if (endingSince) return;
+    endingSince = Date.now();
     if (reason) console.error(reason);
     await family.stop();
     process.exit(code);
   };
   const asked = () => {
-    if (ending) {
+    // One Ctrl-C may arrive twice, from the terminal and from npm; a second one from the person comes later.
+    if (endingSince && Date.now() - endingSince > 1000) {
       family.killAll();
       process.exit(1);
     }

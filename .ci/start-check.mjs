@@ -1,7 +1,7 @@
 // The promise of `npm start`, kept in the built product: it becomes ready, says where things are, stops cleanly when
 // asked to, refuses a port in use, and finds its data again. Run by `npm test` after the build.
 import { spawn } from 'node:child_process';
-import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { createServer } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -90,10 +90,13 @@ async function oneLife(dataDir, port, signal) {
       'with the reason',
       second.output(),
     );
+    // Twice, as a terminal and npm together deliver one Ctrl-C.
+    start.child.kill(signal);
     start.child.kill(signal);
     expect((await start.ended) === 0, `${signal} ends it with 0`, start.output());
     expect(!(await answers(`${address}/health/live`)), 'the server is gone afterwards');
     expect(!(await answers(mailPage)), 'and the mail page');
+    expect(!existsSync(join(dataDir, 'trammel.lock')), 'and the lock on the data');
     return output;
   } finally {
     start.child.kill('SIGKILL');
