@@ -80,7 +80,6 @@ export function evaluateCompiled(
     }
     const length = text.length;
     let magnitude = 0;
-    let figures = 0;
     let scale = 0;
     let negative = false;
     let plain = length <= FAST_DIGITS + 2;
@@ -92,7 +91,7 @@ export function evaluateCompiled(
         at = 1;
         negative = first === 0x2d;
       }
-      figures = length - at;
+      let figures = length - at;
       for (; at < length; at += 1) {
         const figure = text.charCodeAt(at) - 48;
         if (figure >= 0 && figure <= 9) magnitude = magnitude * 10 + figure;
