@@ -17,5 +17,7 @@ export function undetermined(code: string, reason: string): Undetermined {
 
 /** Tells an undetermined answer from a result, whatever the type of the result. */
 export function isUndetermined(value: unknown): value is Undetermined {
-  return typeof value === 'object' && value !== null && (value as Partial<Undetermined>).undetermined === true;
+  return (
+    typeof value === 'object' && value !== null && (value as Partial<Undetermined>).undetermined === true
+  );
 }
