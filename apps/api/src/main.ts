@@ -11,6 +11,7 @@ import { gracefulStop } from './graceful-stop.ts';
 import { ordinaryLimits } from './http/rate-limits.ts';
 import { createLogger } from './http/request-log.ts';
 import { createMailTransport } from './mail/transport.ts';
+import { seedDemo } from './seed/seed-demo.ts';
 import { FileStore } from './storage/file-store.ts';
 
 /** Longest a transaction should hold the writer; beyond, it is named in the log. */
@@ -43,6 +44,7 @@ async function main(): Promise<void> {
     checkEveryAnswer: false,
   });
   await app.prepare();
+  if (config.demo && (await seedDemo(app.core, store))) log.info('the demo scenario is in place');
 
   const server = createServer(app.express);
   server.requestTimeout = 300_000;

@@ -26,8 +26,7 @@ export async function recordDecision(
         decidedSubmissionId: submission.id,
         outcome: asked.outcome,
         approvedRevision: submission.revisionCode,
-        endOn: asked.endOn,
-        pieceLimit: asked.pieceLimit,
+        ...tightest([asked, ...(await deviationsUsed(manager, submission.id))]),
         piecesUsed: 0,
         stoppedAt: null,
       }
@@ -53,4 +52,24 @@ export async function recordDecision(
     updatedAt: now,
     ...decided,
   });
+}
+
+interface BuyingLimits {
+  readonly endOn: string | null;
+  readonly pieceLimit: number | null;
+}
+
+/** A row accepted under a deviation carries the deviation's date and quantity over to what may be bought (R51). */
+async function deviationsUsed(manager: EntityManager, submissionId: string): Promise<BuyingLimits[]> {
+  return manager.query(
+    `SELECT d.until_on AS endOn, d.quantity AS pieceLimit FROM characteristic_decisions c JOIN deviations d ON d.id = c.deviation_id
+     WHERE c.submission_id = ? AND c.mark = 'accepted'`,
+    [submissionId],
+  );
+}
+
+function tightest(limits: readonly BuyingLimits[]): BuyingLimits {
+  const dates = limits.map((limit) => limit.endOn).filter((date) => date !== null);
+  const pieces = limits.map((limit) => limit.pieceLimit).filter((count) => count !== null);
+  return { endOn: dates.sort()[0] ?? null, pieceLimit: pieces.length === 0 ? null : Math.min(...pieces) };
 }
