@@ -54,6 +54,7 @@ table { width: 100%; border-collapse: collapse; background: var(--sheet); }
 caption { padding: 4px 0; color: var(--pencil); font-size: 14px; text-align: left; }
 th, td { height: 32px; padding: 4px 8px; border: 1px solid var(--rule); text-align: left; vertical-align: top; }
 th, dt { color: var(--pencil); font-size: 14px; font-weight: 400; }
+td time { white-space: nowrap; }
 time { font-family: 'Atkinson Hyperlegible Mono Variable', ui-monospace, monospace; font-size: 14px; }
 dl { margin: 16px 0; border: 1px solid var(--rule); background: var(--sheet); }
 dl div { padding: 4px 8px; border-bottom: 1px solid var(--rule); }

@@ -26,7 +26,8 @@ const wellFormed = /^\d{13}-[0-9a-f]{8}$/;
 const addresses = (field: AddressObject | AddressObject[] | undefined): string =>
   [field ?? []]
     .flat()
-    .map((entry) => entry.text)
+    .flatMap((entry) => entry.value)
+    .map(({ name, address }) => (name ? `${name} <${address ?? ''}>` : (address ?? '')))
     .join(', ');
 
 /** Reads what the catcher has kept. A mail never changes once its file is there, so summaries are remembered. */

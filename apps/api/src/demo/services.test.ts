@@ -96,6 +96,7 @@ describe('caught mail', () => {
 
     const list = await (await fetch(address)).text();
     expect(list.indexOf('Maß Ø25 geändert')).toBeGreaterThan(0);
+    expect(list).toContain('<td>Joana Pell &lt;joana@quillmark.example&gt;</td>');
     expect(list.indexOf('Maß Ø25 geändert')).toBeLessThan(list.indexOf('First'));
 
     const path = /href="(\/mail\/[\w-]+)">Maß/.exec(list)?.[1] ?? '';
