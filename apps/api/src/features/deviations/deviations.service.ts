@@ -246,7 +246,7 @@ async function mailCustomer(
     manager,
     submission.requestId,
     deed.publicUrl,
-    `/packages/${submission.id}/deviations`,
+    `/submissions/${submission.id}/deviations`,
   );
   for (const person of await peopleOfCustomer(manager, submission.requestId)) {
     enqueueMail(manager, deed.now, {
@@ -268,7 +268,7 @@ async function mailSupplier(
     manager,
     submission.requestId,
     deed.publicUrl,
-    `/packages/${submission.id}/deviations`,
+    `/submissions/${submission.id}/deviations`,
   );
   for (const person of await peopleWithRole(manager, submission.supplierId, 'supplier-quality')) {
     enqueueMail(manager, deed.now, {

@@ -27,7 +27,7 @@ export async function mailDecision(
     manager,
     submission.requestId,
     deed.publicUrl,
-    `/packages/${submission.id}`,
+    `/submissions/${submission.id}`,
   );
   const readers = [
     ...(await peopleWithRole(manager, submission.supplierId, 'supplier-quality')),

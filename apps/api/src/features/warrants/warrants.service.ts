@@ -176,7 +176,7 @@ async function mailSubmitted(
     manager,
     submission.requestId,
     deed.publicUrl,
-    `/packages/${submission.id}/review`,
+    `/submissions/${submission.id}/review`,
   );
   for (const person of await peopleOfCustomer(manager, submission.requestId)) {
     enqueueMail(manager, deed.now, {
