@@ -19,7 +19,31 @@ export const routeTable: readonly PortalRoute[] = [
   { path: '/invitation/:token', public: true, lazy: () => import('./routes/invitation.tsx') },
   { path: '/password-reset/:token', public: true, lazy: () => import('./routes/password-reset.tsx') },
   { path: '/account', lazy: () => import('./routes/account.tsx') },
+  { path: '/worklist', needs: 'request:answer', lazy: () => import('./routes/worklist.tsx') },
+  { path: '/review-desk', needs: 'review:decide', lazy: () => import('./routes/review-desk.tsx') },
+  { path: '/requests', needs: 'request:read', lazy: () => import('./routes/requests/requests.tsx') },
+  { path: '/requests/new', needs: 'request:write', lazy: () => import('./routes/requests/new-request.tsx') },
+  {
+    path: '/requests/:requestId',
+    needs: 'request:read',
+    lazy: () => import('./routes/requests/request.tsx'),
+  },
+  {
+    path: '/submissions/:submissionId',
+    needs: 'submission:read',
+    lazy: () => import('./routes/packages/overview.tsx'),
+  },
+  {
+    path: '/submissions/:submissionId/evidence',
+    needs: 'submission:read',
+    lazy: () => import('./routes/packages/evidence.tsx'),
+  },
+  { path: '/gauges', needs: 'gauge:write', lazy: () => import('./routes/gauges.tsx') },
   { path: '/people', needs: 'people:manage', lazy: () => import('./routes/people.tsx') },
-  { path: '/suppliers', needs: 'links:manage', lazy: () => import('./routes/suppliers.tsx') },
+  {
+    path: '/suppliers',
+    needs: ['links:manage', 'request:write'],
+    lazy: () => import('./routes/suppliers.tsx'),
+  },
   { path: '/audit', needs: 'audit:read', lazy: () => import('./routes/audit.tsx') },
 ];

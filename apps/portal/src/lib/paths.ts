@@ -16,6 +16,7 @@ export const paths = {
   part: (id: string) => `/parts/${id}`,
   revision: (partId: string, revisionId: string) => `/parts/${partId}/revisions/${revisionId}`,
   requests: '/requests',
+  newRequest: '/requests/new',
   request: (id: string) => `/requests/${id}`,
   submission: (id: string) => `/submissions/${id}`,
   measurements: (id: string) => `/submissions/${id}/measurements`,

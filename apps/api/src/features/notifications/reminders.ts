@@ -67,7 +67,7 @@ async function remind(manager: EntityManager, reminding: Reminding): Promise<boo
   if (current?.state !== round.state || current.dueOn !== round.dueOn) return false;
   await manager.insert(Reminder, { id: randomUUID(), kind, objectId: round.id, mark, sentAt: now });
 
-  const path = mark === 'not-acknowledged' ? `/requests/${round.requestId}` : `/packages/${round.id}`;
+  const path = mark === 'not-acknowledged' ? `/requests/${round.requestId}` : `/submissions/${round.id}`;
   const facts = await mailFactsOfRequest(manager, round.requestId, publicUrl, path);
   const roundFacts = { ...facts, dueOn: round.dueOn };
   for (const person of await peopleWithRole(manager, round.supplierId, 'supplier-quality')) {

@@ -12,6 +12,7 @@ export const deskLinks: readonly DeskLink[] = [
   { label: 'Worklist', path: paths.worklist, needs: 'measurement:write' },
   { label: 'Review desk', path: paths.reviewDesk, needs: 'review:decide' },
   { label: 'Buying status', path: paths.buyingStatus, needs: 'buying:read' },
+  { label: 'Requests', path: paths.requests, needs: 'request:read' },
   { label: 'Parts', path: paths.parts, needs: 'part:read' },
   { label: 'Gauges', path: paths.gauges, needs: 'gauge:write' },
   { label: 'Suppliers', path: paths.suppliers, needs: 'links:manage' },

@@ -1,0 +1,5 @@
+import { GaugeList } from '../../features/gauges/components/gauge-list.tsx';
+
+export function Component() {
+  return <GaugeList />;
+}

@@ -1,0 +1,21 @@
+import type { SubmissionResponse } from '@trammel/shared/submissions';
+import { paths } from '../../../lib/paths.ts';
+
+export interface PackageTab {
+  label: string;
+  path: (submissionId: string) => string;
+  /** Whether there is something behind it for this person now; left out where there always is. */
+  shows?: (submission: SubmissionResponse) => boolean;
+  /** A number worth seeing before the tab is opened. */
+  count?: (submission: SubmissionResponse) => number;
+}
+
+/** The supplier's own work, and for the customer what was submitted. */
+export const hasEvidence = (submission: SubmissionResponse): boolean =>
+  submission.side === 'supplier' ? submission.state !== 'requested' : submission.submittedAt !== null;
+
+/** Parts of a package's page in the order of the work. A page of a package adds its line here. */
+export const packageTabs: readonly PackageTab[] = [
+  { label: 'Overview', path: paths.submission },
+  { label: 'Evidence', path: paths.evidence, shows: hasEvidence },
+];
