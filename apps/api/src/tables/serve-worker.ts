@@ -6,18 +6,17 @@ import type { WorkerAnswer } from './worker-pool.ts';
 export function serveWorker(perform: (task: never) => unknown): void {
   const port = parentPort;
   if (!port) throw new Error('This file runs as a worker only.');
-  port.on('message', ({ id, task }: { id: number; task: unknown }) => {
-    void (async () => {
-      let answer: WorkerAnswer;
-      try {
-        answer = { id, value: await perform(task as never) };
-      } catch (error) {
-        if (error instanceof TableRefused)
-          answer = { id, refused: { detail: error.message, remedy: error.remedy } };
-        else answer = { id, failed: error instanceof Error ? (error.stack ?? error.message) : String(error) };
-      }
-      port.postMessage(answer);
-    })();
+  port.on('message', (task: unknown) => {
+    void answerTo(perform, task).then((answer) => port.postMessage(answer));
   });
   port.postMessage('ready');
+}
+
+async function answerTo(perform: (task: never) => unknown, task: unknown): Promise<WorkerAnswer> {
+  try {
+    return { value: await perform(task as never) };
+  } catch (error) {
+    if (error instanceof TableRefused) return { refused: { detail: error.message, remedy: error.remedy } };
+    return { failed: error instanceof Error ? (error.stack ?? error.message) : String(error) };
+  }
 }

@@ -1,4 +1,5 @@
-import { readDelimited, delimiters, statedDelimiter, type Delimiter } from './read-delimited.ts';
+import Papa from 'papaparse';
+import { delimiters, statedDelimiter, type Delimiter } from './read-delimited.ts';
 import { cellText, type Table } from './table.ts';
 
 /** The delimiter whose first rows agree best in their number of columns; a stated one wins. */
@@ -8,14 +9,11 @@ export function suggestDelimiter(text: string): Delimiter {
   const head = text.slice(0, 60_000);
   let best: { sign: Delimiter; score: number } = { sign: ',', score: 0 };
   for (const sign of delimiters) {
-    let rows;
-    try {
-      rows = readDelimited(head, sign, 40).rows;
-    } catch {
-      continue;
-    }
+    const rows = Papa.parse<string[]>(head, { delimiter: sign, preview: 40 }).data.filter((row) =>
+      row.some((cell) => cell !== ''),
+    );
     const counts = new Map<number, number>();
-    for (const row of rows) counts.set(row.cells.length, (counts.get(row.cells.length) ?? 0) + 1);
+    for (const row of rows) counts.set(row.length, (counts.get(row.length) ?? 0) + 1);
     const [width = 1, often = 0] = [...counts].sort((a, b) => b[1] - a[1] || b[0] - a[0])[0] ?? [];
     // Columns count less than agreement: a decimal comma makes many ragged columns of a ';' file.
     const score = width < 2 ? 0 : (often / rows.length) * (1 + Math.min(width, 10) / 100);

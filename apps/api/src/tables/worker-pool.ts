@@ -6,7 +6,6 @@ import { tableBudget } from './budget.ts';
 import { TableRefused } from './table.ts';
 
 export interface WorkerAnswer {
-  readonly id: number;
   readonly value?: unknown;
   readonly refused?: { readonly detail: string; readonly remedy: string };
   readonly failed?: string;
@@ -14,7 +13,6 @@ export interface WorkerAnswer {
 
 interface Job {
   readonly task: unknown;
-  readonly transfer: readonly ArrayBuffer[];
   readonly resolve: (value: unknown) => void;
   readonly reject: (error: Error) => void;
 }
@@ -27,9 +25,7 @@ const idleMilliseconds = 30_000;
  */
 export class WorkerPool {
   private readonly queue: Job[] = [];
-  private readonly idle: { worker: Worker; timer: NodeJS.Timeout }[] = [];
-  private running = 0;
-  private lastId = 0;
+  private readonly threads = new Set<Thread>();
 
   constructor(
     private readonly entry: URL,
@@ -37,107 +33,131 @@ export class WorkerPool {
     private readonly seconds: number = tableBudget.seconds,
   ) {}
 
-  run(task: unknown, transfer: readonly ArrayBuffer[] = []): Promise<unknown> {
+  run(task: unknown): Promise<unknown> {
     return new Promise((resolve, reject) => {
-      this.queue.push({ task, transfer, resolve, reject });
+      this.queue.push({ task, resolve, reject });
       this.next();
     });
   }
 
   private next(): void {
-    if (this.running >= this.size) return;
-    const job = this.queue.shift();
+    const job = this.queue[0];
     if (!job) return;
-    this.running += 1;
-    const waiting = this.idle.pop();
-    if (waiting) clearTimeout(waiting.timer);
-    const worker = waiting?.worker ?? this.start();
-    this.serve(worker, job);
-  }
-
-  private serve(worker: Worker, job: Job): void {
-    const id = (this.lastId += 1);
-    let deadline: NodeJS.Timeout | undefined;
-    const finish = (keep: boolean, settle: () => void) => {
-      clearTimeout(deadline);
-      worker.removeAllListeners();
-      worker.unref();
-      if (keep) this.rest(worker);
-      else void worker.terminate();
-      this.running -= 1;
-      settle();
-      this.next();
-    };
-    const overrun = () =>
-      finish(false, () =>
-        job.reject(
-          new TableRefused(
-            `Reading the file took longer than ${this.seconds} seconds.`,
-            'Send a smaller table.',
-          ),
-        ),
-      );
-    const begin = () => {
-      deadline = setTimeout(overrun, this.seconds * 1000);
-      worker.postMessage({ id, task: job.task }, [...job.transfer]);
-    };
-    worker.ref();
-    worker.on('message', (answer: WorkerAnswer | 'ready') => {
-      if (answer === 'ready') return begin();
-      if (answer.id !== id) return;
-      finish(answer.failed === undefined, () => {
-        if (answer.refused) job.reject(new TableRefused(answer.refused.detail, answer.refused.remedy));
-        else if (answer.failed !== undefined) job.reject(new Error(answer.failed));
-        else job.resolve(answer.value);
+    let thread = [...this.threads].find((one) => one.isFree);
+    if (!thread && this.threads.size < this.size) {
+      thread = new Thread(this.entry, this.seconds, (ended) => {
+        if (ended) this.threads.delete(ended);
+        this.next();
       });
+      this.threads.add(thread);
+    }
+    if (!thread) return;
+    this.queue.shift();
+    thread.take(job);
+  }
+}
+
+class Thread {
+  private readonly worker: Worker;
+  private job: Job | null = null;
+  private isReady = false;
+  private deadline: NodeJS.Timeout | undefined;
+  private rest: NodeJS.Timeout | undefined;
+  private hasEnded = false;
+
+  constructor(
+    entry: URL,
+    private readonly seconds: number,
+    private readonly onFree: (ended: Thread | null) => void,
+  ) {
+    this.worker = startWorker(entry);
+    this.worker.on('message', (message: WorkerAnswer | 'ready') => {
+      if (message === 'ready') {
+        this.isReady = true;
+        this.begin();
+      } else this.answered(message);
     });
-    worker.on('error', (error: Error & { code?: string }) => {
-      const tooBig = error.code === 'ERR_WORKER_OUT_OF_MEMORY';
-      finish(false, () =>
-        job.reject(
-          tooBig
-            ? new TableRefused(
-                'The table needs more memory than is given to one file.',
-                'Send a smaller table.',
-              )
-            : error,
-        ),
+    this.worker.on('error', (error: Error & { code?: string }) => {
+      const refused = new TableRefused(
+        'The table needs more memory than is given to one file.',
+        'Send a smaller table.',
       );
+      this.end(error.code === 'ERR_WORKER_OUT_OF_MEMORY' ? refused : error);
     });
-    if (this.warm.has(worker)) begin();
-    this.warm.add(worker);
+    this.worker.on('exit', () => this.end(new Error('A thread that reads tables ended by itself.')));
   }
 
-  private readonly warm = new WeakSet<Worker>();
-
-  private rest(worker: Worker): void {
-    const timer = setTimeout(() => {
-      const index = this.idle.findIndex((entry) => entry.worker === worker);
-      if (index >= 0) this.idle.splice(index, 1);
-      void worker.terminate();
-    }, idleMilliseconds);
-    timer.unref();
-    this.idle.push({ worker, timer });
+  get isFree(): boolean {
+    return this.job === null && !this.hasEnded;
   }
 
-  private start(): Worker {
-    return new Worker(this.entry, {
-      resourceLimits: {
-        maxOldGenerationSizeMb: tableBudget.heapMegabytes,
-        maxYoungGenerationSizeMb: 64,
-        stackSizeMb: 4,
-      },
-      // Sources run through the loader of development; the built product has plain JavaScript.
-      ...(this.entry.pathname.endsWith('.ts') ? { execArgv: ['--import', loaderOfDevelopment()] } : {}),
-    });
+  take(job: Job): void {
+    clearTimeout(this.rest);
+    this.job = job;
+    this.worker.ref();
+    if (this.isReady) this.begin();
+  }
+
+  /** The clock runs from here: how long a thread takes to start is not the file's fault. */
+  private begin(): void {
+    if (!this.job) return;
+    this.worker.postMessage(this.job.task);
+    this.deadline = setTimeout(() => {
+      const detail = `Reading the file took longer than ${this.seconds} seconds.`;
+      this.end(new TableRefused(detail, 'Send a smaller table.'));
+    }, this.seconds * 1000);
+  }
+
+  private answered({ value, refused, failed }: WorkerAnswer): void {
+    const job = this.settle();
+    if (refused) job?.reject(new TableRefused(refused.detail, refused.remedy));
+    else if (failed !== undefined) job?.reject(new Error(failed));
+    else job?.resolve(value);
+    this.worker.unref();
+    this.rest = setTimeout(() => this.end(null), idleMilliseconds);
+    this.rest.unref();
+    this.onFree(null);
+  }
+
+  private settle(): Job | null {
+    clearTimeout(this.deadline);
+    const { job } = this;
+    this.job = null;
+    return job;
+  }
+
+  private end(reason: Error | null): void {
+    if (this.hasEnded) return;
+    this.hasEnded = true;
+    clearTimeout(this.rest);
+    const job = this.settle();
+    void this.worker.terminate();
+    if (reason) job?.reject(reason);
+    this.onFree(this);
   }
 }
 
-function loaderOfDevelopment(): string {
-  return pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
+function startWorker(entry: URL): Worker {
+  const resourceLimits = {
+    maxOldGenerationSizeMb: tableBudget.heapMegabytes,
+    maxYoungGenerationSizeMb: 64,
+    stackSizeMb: 4,
+  };
+  return entry.pathname.endsWith('.ts')
+    ? new Worker(throughLoader(entry), { resourceLimits, eval: true })
+    : new Worker(entry, { resourceLimits });
 }
 
-/** The worker's file: beside its caller as source, at the top of the build as JavaScript. */
+/** Sources run through the loader of development, which does not enter threads by itself; the build is plain JavaScript. */
+function throughLoader(entry: URL): string {
+  const loader = createRequire(import.meta.url)
+    .resolve('tsx/esm/api')
+    .replace(/\.cjs$/, '.mjs');
+  const start = `import(${JSON.stringify(pathToFileURL(loader).href)}).then((tsx) => tsx.register())`;
+  return `${start}.then(() => import(${JSON.stringify(entry.href)}));`;
+}
+
+/** The worker's file: beside its caller as source, beside the bundle as JavaScript. */
 export function workerEntry(callerUrl: string, name: string): URL {
   for (const candidate of [`./${name}.ts`, `./${name}.js`, `../${name}.js`]) {
     const url = new URL(candidate, callerUrl);

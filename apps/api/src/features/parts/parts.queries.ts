@@ -34,7 +34,7 @@ export async function findRevisionForActor(from: Executor, actor: Actor, id: str
     return { revision, part: revision.part, side: 'owner' };
   }
   const asked: unknown[] = await from.query(
-    `SELECT 1 FROM requests WHERE supplier_id = ? AND revision_id = ? AND state = 'issued' LIMIT 1`,
+    `SELECT 1 FROM requests WHERE supplier_id = ? AND revision_id = ? AND issued_at IS NOT NULL LIMIT 1`,
     [actor.organisationId, id],
   );
   if (asked.length === 0 || !actor.permissions.has('request:read')) throw new NotFound();

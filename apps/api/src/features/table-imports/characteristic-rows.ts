@@ -125,7 +125,8 @@ function readRow(
     balloon,
     sheet: cell('sheet'),
     zone: cell('zone'),
-    description: description || (geometricType ?? (kind === 'note' ? 'Note' : '')),
+    // A sheet without any column of names is still a table of characteristics.
+    description: description || (geometricType ?? (mapping.description == null ? `Balloon ${balloon}` : '')),
     kind,
     tolerance: stated.tolerance,
     geometric: geometricType === null ? null : readGeometric(geometricType, cell),
