@@ -45,7 +45,7 @@ it('shows each refusal beside its field and in a summary that leads there', asyn
   expect(summary).toHaveFocus();
   expect(screen.getByLabelText('Name')).toHaveAccessibleDescription('Fill this in.');
   expect(screen.getByLabelText('Mail address')).toHaveValue('nobody');
-  await user.click(screen.getByRole('link', { name: 'Not a mail address.' }));
+  await user.click(screen.getByRole('link', { name: 'Mail address: Not a mail address.' }));
   expect(screen.getByLabelText('Mail address')).toHaveFocus();
 });
 

@@ -5,6 +5,8 @@ export interface FieldError {
   /** Dotted path of the value: `name`, `conditions.0.owner`. */
   field: string;
   message: string;
+  /** What the field is called on the page. */
+  label?: string;
 }
 
 interface FormSchema<Out> {
@@ -63,17 +65,20 @@ export function useForm<Values extends object, Out>(options: FormOptions<Values,
     );
   };
 
+  // Read from the page at the moment of refusal: the summary then calls a field what the person sees it called.
+  const named = (list: FieldError[]) => list.map((error) => ({ ...error, ...labelOf(idOf(error.field)) }));
+
   const submit = async (event?: FormEvent) => {
     event?.preventDefault();
     if (busy) return;
     setFailure(null);
     const checked = options.schema.safeParse(values);
     if (!checked.success) {
-      setErrors(
-        firstOfEach(
-          checked.error.issues.map((issue) => ({ field: issue.path.join('.'), message: issue.message })),
-        ),
-      );
+      const refused = checked.error.issues.map((issue) => ({
+        field: issue.path.join('.'),
+        message: issue.message,
+      }));
+      setErrors(named(firstOfEach(refused)));
       return;
     }
     setErrors([]);
@@ -82,7 +87,7 @@ export function useForm<Values extends object, Out>(options: FormOptions<Values,
       await options.onSubmit(values, checked.data);
     } catch (error) {
       const refused = error instanceof ApiProblem ? fieldErrorsOf(error) : [];
-      setErrors(refused);
+      setErrors(named(refused));
       if (refused.length === 0) setFailure(reasonOf(error));
     } finally {
       setBusy(false);
@@ -111,7 +116,7 @@ export function useForm<Values extends object, Out>(options: FormOptions<Values,
 
 /** The refusals of a 422, by the dotted path of their JSON pointer. */
 export function fieldErrorsOf(problem: ApiProblem): FieldError[] {
-  const named = (problem.problem.errors ?? []).map(({ pointer, detail }) => ({
+  const refused = (problem.problem.errors ?? []).map(({ pointer, detail }) => ({
     field: pointer
       .replace(/^#?\/?(?:body\/)?/, '')
       .split('/')
@@ -119,9 +124,20 @@ export function fieldErrorsOf(problem: ApiProblem): FieldError[] {
       .join('.'),
     message: detail,
   }));
-  return firstOfEach(named);
+  return firstOfEach(refused);
 }
 
 function firstOfEach(errors: FieldError[]): FieldError[] {
   return errors.filter((error, index) => errors.findIndex((other) => other.field === error.field) === index);
+}
+
+function labelOf(id: string): { label?: string } {
+  const control = document.getElementById(id);
+  const isControl =
+    control instanceof HTMLInputElement ||
+    control instanceof HTMLSelectElement ||
+    control instanceof HTMLTextAreaElement;
+  const label = isControl ? control.labels?.[0] : control?.querySelector('legend');
+  const text = label?.firstChild?.textContent?.trim() ?? '';
+  return text === '' ? {} : { label: text };
 }

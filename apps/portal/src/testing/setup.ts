@@ -17,7 +17,7 @@ function preparePage(): void {
     localStorage.clear();
   });
 
-  // jsdom has neither modal dialogs nor popovers: these open and close, without the browser's focus rules.
+  // jsdom has neither modal dialogs nor popovers: these open and close, without the browser's rules of focus and layer.
   HTMLDialogElement.prototype.showModal ??= function showModal(this: HTMLDialogElement) {
     this.open = true;
     this.querySelector<HTMLElement>('button, input, select, textarea')?.focus();
@@ -25,8 +25,12 @@ function preparePage(): void {
   HTMLDialogElement.prototype.close ??= function close(this: HTMLDialogElement) {
     this.open = false;
   };
-  HTMLElement.prototype.showPopover ??= function showPopover() {};
-  HTMLElement.prototype.hidePopover ??= function hidePopover() {};
+  HTMLElement.prototype.showPopover ??= function showPopover(this: HTMLElement) {
+    this.style.setProperty('display', 'block');
+  };
+  HTMLElement.prototype.hidePopover ??= function hidePopover(this: HTMLElement) {
+    this.style.removeProperty('display');
+  };
   Element.prototype.scrollIntoView ??= function scrollIntoView() {};
   window.scrollTo = () => undefined;
 }

@@ -50,8 +50,7 @@ export function hatchPath(bands: Beam['guards']): string {
     const width = to - from;
     const lean = Math.min(4, width);
     const lines = Math.max(1, Math.floor((width - lean) / 3) + 1);
-    for (let i = 0; i < lines; i += 1)
-      path += `M${short(from + i * 3)} ${line + 4}l${lean}-8`;
+    for (let i = 0; i < lines; i += 1) path += `M${short(from + i * 3)} ${line + 4}l${lean}-8`;
   }
   return path;
 }

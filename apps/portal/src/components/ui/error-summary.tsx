@@ -41,13 +41,13 @@ export function ErrorSummary({ errors, idOf, failure = null }: ErrorSummaryProps
           <li key={error.field}>
             <a
               href={`#${idOf(error.field)}`}
-              className="text-vermilion"
+              className="inline-flex min-h-6 items-center text-vermilion"
               onClick={(event) => {
                 event.preventDefault();
                 goTo(error.field);
               }}
             >
-              {error.message}
+              {error.label === undefined ? error.message : `${error.label}: ${error.message}`}
             </a>
           </li>
         ))}

@@ -1,4 +1,5 @@
 import { useEffect, useId, useRef, useState, type ReactNode } from 'react';
+import { placePopover } from './place-popover.ts';
 
 export interface FigureProps {
   /** The number as it is shown, or why there is none. */
@@ -28,7 +29,7 @@ export function Figure({ value, name, formula, inputs = [], n, standard, caution
     if (!shown || box === null || trigger.current === null) return;
     // The top layer is not cut off by a scrolling table.
     box.showPopover();
-    place(box, trigger.current.getBoundingClientRect());
+    placePopover(box, trigger.current.getBoundingClientRect());
     const leave = (event: KeyboardEvent | Event) => {
       if (event instanceof KeyboardEvent && event.key !== 'Escape') return;
       setOpen(false);
@@ -86,14 +87,4 @@ export function Figure({ value, name, formula, inputs = [], n, standard, caution
       )}
     </span>
   );
-}
-
-function place(box: HTMLElement, anchor: DOMRect): void {
-  const gap = 2;
-  const { width, height } = box.getBoundingClientRect();
-  const below = anchor.bottom + gap + height <= window.innerHeight;
-  const top = below ? anchor.bottom + gap : Math.max(8, anchor.top - gap - height);
-  const left = Math.max(8, Math.min(anchor.left, window.innerWidth - width - 8));
-  box.style.setProperty('top', `${top}px`);
-  box.style.setProperty('left', `${left}px`);
 }

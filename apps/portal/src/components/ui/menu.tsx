@@ -1,6 +1,7 @@
 import { useEffect, useId, useRef, useState, type KeyboardEvent, type ReactNode } from 'react';
 import { useNavigate } from 'react-router-dom';
 import { cn } from '../../lib/cn.ts';
+import { placePopover } from './place-popover.ts';
 import { buttonLook, type ButtonSize, type ButtonWeight } from './button-look.ts';
 
 export interface MenuItem {
@@ -26,19 +27,29 @@ export function Menu({ label, accessibleLabel, items, weight, size }: MenuProps)
   const id = useId();
   const root = useRef<HTMLDivElement>(null);
   const trigger = useRef<HTMLButtonElement>(null);
+  const list = useRef<HTMLDivElement>(null);
   const navigate = useNavigate();
   const entries = () => [
     ...(root.current?.querySelectorAll<HTMLElement>('[role=menuitem]:not(:disabled)') ?? []),
   ];
 
   useEffect(() => {
-    if (!open) return;
-    entries()[0]?.focus();
+    const box = list.current;
+    if (!open || box === null || trigger.current === null) return;
+    // The top layer is not cut off by a scrolling table.
+    box.showPopover();
+    placePopover(box, trigger.current.getBoundingClientRect(), 'end');
+    entries()[0]?.focus({ preventScroll: true });
+    const leave = () => setOpen(false);
     const outside = (event: PointerEvent) => {
       if (!root.current?.contains(event.target as Node)) setOpen(false);
     };
     document.addEventListener('pointerdown', outside);
-    return () => document.removeEventListener('pointerdown', outside);
+    document.addEventListener('scroll', leave, true);
+    return () => {
+      document.removeEventListener('pointerdown', outside);
+      document.removeEventListener('scroll', leave, true);
+    };
   }, [open]);
 
   const close = () => {
@@ -98,9 +109,11 @@ export function Menu({ label, accessibleLabel, items, weight, size }: MenuProps)
       </button>
       {open && (
         <div
+          ref={list}
           id={id}
           role="menu"
-          className="absolute right-0 z-20 mt-1 flex min-w-44 flex-col rounded-max border border-pencil bg-sheet py-1"
+          popover="manual"
+          className="fixed inset-auto m-0 min-w-44 flex-col rounded-max border border-pencil bg-sheet py-1 text-graphite open:flex"
         >
           {items.map((item) => (
             <button

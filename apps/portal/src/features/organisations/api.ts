@@ -6,6 +6,8 @@ import {
   type PersonResponse,
 } from '@trammel/shared/accounts';
 import {
+  ownOrganisationResponse,
+  siteResponse,
   supplierResponse,
   suppliersResponse,
   type InviteSupplierRequest,
@@ -43,3 +45,11 @@ export const suppliersQuery = queryOptions({
 
 export const inviteSupplier = (body: InviteSupplierRequest, idempotencyKey: string) =>
   call('POST', '/api/suppliers', supplierResponse, { body, idempotencyKey });
+
+export const ownOrganisationQuery = queryOptions({
+  queryKey: ['organisation'],
+  queryFn: ({ signal }) => call('GET', '/api/organisation', ownOrganisationResponse, { signal }),
+});
+
+export const addSite = (body: { name: string; address: string }) =>
+  call('POST', '/api/organisation/sites', siteResponse, { body });

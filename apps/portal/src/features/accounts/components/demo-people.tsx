@@ -36,7 +36,7 @@ export function DemoPeople({ onSignedIn }: { onSignedIn: (session: SessionRespon
                     type="button"
                     disabled={enter.isPending}
                     onClick={() => enter.mutate({ email: person.email, password: data.password })}
-                    className="flex w-full flex-wrap items-baseline justify-between gap-x-3 px-3 py-1.5 text-start -outline-offset-2 hover:bg-marking/8"
+                    className="flex w-full flex-col px-3 py-1.5 text-start -outline-offset-2 hover:bg-marking/8"
                   >
                     <span className="font-medium text-marking">{person.name}</span>
                     <span className="text-[0.8125rem] text-pencil">

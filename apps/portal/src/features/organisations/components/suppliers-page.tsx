@@ -9,6 +9,7 @@ import { PageHead } from '../../../components/ui/page-head.tsx';
 import { TextField } from '../../../components/ui/text-field.tsx';
 import { Moment } from '../../../components/ui/time.tsx';
 import { countOf } from '../../../lib/format.ts';
+import { useMay } from '../../../lib/session.ts';
 import { useUrlState } from '../../../lib/use-url-state.ts';
 import { suppliersQuery } from '../api.ts';
 import { InviteSupplierDialog } from './invite-supplier-dialog.tsx';
@@ -45,6 +46,7 @@ const columns: DataColumn<SupplierResponse>[] = [
 export function SuppliersPage() {
   const { data, error, isPending, refetch } = useQuery(suppliersQuery);
   const [view, change] = useUrlState({ q: '', sort: 'name' });
+  const mayInvite = useMay('links:manage');
   const [inviting, setInviting] = useState(false);
   const wanted = view.q.trim().toLowerCase();
   const rows = useMemo(
@@ -55,7 +57,7 @@ export function SuppliersPage() {
   if (isPending) return <Loading />;
   if (error) return <LoadFailure what="The suppliers" error={error} onRetry={() => void refetch()} />;
 
-  const invite = (
+  const invite = mayInvite && (
     <Button weight="primary" onClick={() => setInviting(true)}>
       Invite a supplier
     </Button>
@@ -92,8 +94,9 @@ export function SuppliersPage() {
           empty={
             wanted === '' ? (
               <EmptyState title="No supplier yet" actions={invite}>
-                Invite the first one: the person you name gets a mail, becomes administrator there, and your
-                quality reviewers can then ask that supplier for an approval.
+                {mayInvite
+                  ? 'Invite the first one: the person you name gets a mail and becomes administrator there. Your quality reviewers can then ask that supplier for an approval.'
+                  : 'An administrator of your organisation invites the first one; then it can be asked for an approval.'}
               </EmptyState>
             ) : (
               <EmptyState
