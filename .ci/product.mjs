@@ -60,7 +60,7 @@ export function apiEnvironment(settings, services) {
     PORT: String(settings.port),
     PUBLIC_URL: process.env.PUBLIC_URL || settings.address,
     DATA_DIR: settings.dataDir,
-    LOG_LEVEL: process.env.LOG_LEVEL || 'warn',
+    LOG_LEVEL: process.env.LOG_LEVEL || 'error',
     S3_ENDPOINT: services.store,
     S3_BUCKET: process.env.S3_BUCKET || 'trammel',
     S3_ACCESS_KEY_ID: 'S3RVER',

@@ -15,7 +15,10 @@ await runProduct(async (family) => {
   const settings = settingsFrom();
   await requirePort(settings);
   await ensureModules();
-  await build();
+  for (const { name, built, seconds } of await build()) {
+    if (built) console.log(`Built the ${name} in ${seconds.toFixed(1)} s.`);
+  }
+  console.log('Starting. A new data folder is first filled with the demo.');
   const services = await startServices(family, ['dist/api/demo/services.js'], settings.dataDir);
   const env = apiEnvironment(settings, services);
   const api = family.start(
