@@ -9,11 +9,13 @@ const source = join(packageFolder, 'src');
 /** Rooms in the order a reader meets them; a room that is not named here follows at the end. */
 const ORDER = [
   'conformance',
+  'tolerance-notation',
   'decimal',
   'units',
   'statistics',
   'control-charts',
   'capability',
+  'process-scan',
   'measurement-systems',
   'sampling',
   'distributions',

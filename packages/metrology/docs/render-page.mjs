@@ -21,6 +21,8 @@ const TITLES = {
   'control-charts': 'Control charts and run rules',
   capability: 'Capability',
   'measurement-systems': 'Gauge studies',
+  'process-scan': 'Scan of a whole package',
+  'tolerance-notation': 'Tolerances as people write them',
   sampling: 'Acceptance sampling',
   distributions: 'Distributions',
 };

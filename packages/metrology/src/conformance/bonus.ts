@@ -55,14 +55,6 @@ export function readSizeLimits(
   return { lower: limits.lower, upper: limits.upper };
 }
 
-/** The size at maximum material: the lower limit of a hole, the upper limit of a shaft. */
-export function maximumMaterialSize(
-  feature: FeatureKind,
-  limits: { lower: Decimal; upper: Decimal },
-): Decimal {
-  return feature === 'hole' ? limits.lower : limits.upper;
-}
-
 /**
  * Bonus tolerance of one piece: how far its actual size departs from maximum (MMC) or least (LMC) material, never
  * negative and never more than the size tolerance; 0 regardless of feature size.
