@@ -2,7 +2,7 @@ import { undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
 import type { StudySize } from './crossed-readings.ts';
 import type { AnovaRow, AnovaTable } from './gauge-anova.ts';
-import { largeSampleInterval } from './large-sample-interval.ts';
+import { intervalQuantiles, largeSampleInterval } from './large-sample-interval.ts';
 import type { Interval, WeightedSquare } from './large-sample-interval.ts';
 
 /** Two-sided confidence intervals of the variances (not of the standard deviations) of a crossed study. */
@@ -39,6 +39,7 @@ export function componentIntervals(
     );
   }
   const alpha = (1 - confidence) / 2;
+  const quantiles = intervalQuantiles(alpha);
   const { parts: p, appraisers: o, trials: r } = size;
   const interval = (...terms: readonly (readonly [AnovaRow | undefined, number])[]): Interval =>
     largeSampleInterval(
@@ -46,6 +47,7 @@ export function componentIntervals(
         source && weight !== 0 ? [{ ...source, weight }] : [],
       ),
       alpha,
+      quantiles,
     );
   const { appraiser, part, interaction, error } = table;
   const shared = {
