@@ -37,6 +37,7 @@ export default defineConfig({
           environment: 'jsdom',
           include: ['apps/portal/src/**/*.test.{ts,tsx}'],
           setupFiles: ['apps/portal/src/testing/setup.ts'],
+          testTimeout: 30_000,
         },
       },
       {

@@ -1,5 +1,5 @@
 import '@testing-library/jest-dom/vitest';
-import { cleanup } from '@testing-library/react';
+import { cleanup, configure } from '@testing-library/react';
 import { afterEach, vi } from 'vitest';
 import { setCsrfToken } from '../lib/api-client.ts';
 
@@ -12,6 +12,9 @@ afterEach(() => {
 if (typeof window !== 'undefined') preparePage();
 
 function preparePage(): void {
+  // A page's module is loaded when it is first shown; a busy machine takes its time for that.
+  configure({ asyncUtilTimeout: 10_000 });
+
   afterEach(() => {
     cleanup();
     localStorage.clear();
