@@ -1,4 +1,4 @@
-import { c4 } from '../control-charts/constants.ts';
+import { chartConstants } from '../control-charts/constants.ts';
 import { tUpperTail } from '../distributions/student-t.ts';
 import { undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
@@ -38,10 +38,9 @@ const FEWEST_OCCASIONS = 10;
 
 /**
  * Stability of a gauge: one master part read several times on each of many occasions, in order of time (AIAG, Measurement Systems Analysis,
- * 4th ed. 2010, ch. III-B). Means and deviations of the occasions are charted with limits of three sigma, mean +/- 3 sbar/(c4 sqrt(n)) and
- * sbar (1 +/- 3 sqrt(1 - c4^2)/c4), and the means are tested for a straight drift (t test of the slope, 1 %).
+ * 4th ed. 2010, ch. III-B). Means and deviations of the occasions are charted with limits of three sigma, mean +/- A3 sbar, B3 sbar and B4 sbar, and the means are tested for a straight drift (t test of the slope, 1 %).
  * Not stable: a point beyond its limits (a point on a limit is not beyond it), or a drift. For run rules on the same means use the control charts.
- * Undetermined: fewer than ten occasions, unequal or single readings, no variation within occasions, values not finite.
+ * Undetermined: fewer than ten occasions, unequal or single readings, more than 25 on an occasion, no variation within occasions, values not finite.
  */
 export function stabilityStudy(
   occasions: readonly (readonly number[])[],
@@ -71,15 +70,11 @@ export function stabilityStudy(
       'no-variation',
       'Readings of the same occasion are all alike: the resolution is too coarse',
     );
-  const factor = c4(size);
-  const meanHalf = (3 * typical) / (factor * Math.sqrt(size));
-  const deviationHalf = (3 * typical * Math.sqrt(1 - factor * factor)) / factor;
-  const meanLimits = { lower: centre - meanHalf, centre, upper: centre + meanHalf };
-  const deviationLimits = {
-    lower: Math.max(0, typical - deviationHalf),
-    centre: typical,
-    upper: typical + deviationHalf,
-  };
+  const constants = chartConstants(size);
+  if ('undetermined' in constants) return constants;
+  const half = constants.A3 * typical;
+  const meanLimits = { lower: centre - half, centre, upper: centre + half };
+  const deviationLimits = { lower: constants.B3 * typical, centre: typical, upper: constants.B4 * typical };
   const points = means.map((mean, place): StabilityPoint => {
     const deviation = deviations[place] ?? 0;
     return {
