@@ -10,3 +10,4 @@ export * from './distributions/index.ts';
 export * from './statistics/index.ts';
 export * from './capability/index.ts';
 export * from './measurement-systems/index.ts';
+export * from './control-charts/index.ts';
