@@ -23,7 +23,7 @@ export async function requirePort({ host, port }, name = 'PORT') {
   if (await portIsFree(host, port)) return;
   throw new Stop(
     `Port ${port} on ${host} is in use, perhaps by a Trammel that is already running. ` +
-      `Stop the other program or choose another port: ${name}=4280 npm start`,
+      `Stop the other program, or name another port by setting ${name}.`,
   );
 }
 
