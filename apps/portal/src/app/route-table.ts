@@ -38,6 +38,27 @@ export const routeTable: readonly PortalRoute[] = [
     needs: 'submission:read',
     lazy: () => import('./routes/packages/evidence.tsx'),
   },
+  {
+    path: '/submissions/:submissionId/measurements',
+    needs: 'submission:read',
+    wide: true,
+    lazy: () => import('./routes/packages/measurements.tsx'),
+  },
+  {
+    path: '/submissions/:submissionId/check',
+    needs: 'submission:read',
+    lazy: () => import('./routes/packages/check.tsx'),
+  },
+  {
+    path: '/submissions/:submissionId/deviations',
+    needs: 'submission:read',
+    lazy: () => import('./routes/packages/deviations.tsx'),
+  },
+  {
+    path: '/submissions/:submissionId/warrant',
+    needs: 'submission:read',
+    lazy: () => import('./routes/packages/warrant.tsx'),
+  },
   { path: '/gauges', needs: 'gauge:write', lazy: () => import('./routes/gauges.tsx') },
   { path: '/people', needs: 'people:manage', lazy: () => import('./routes/people.tsx') },
   {

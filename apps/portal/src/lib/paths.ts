@@ -15,11 +15,17 @@ export const paths = {
   parts: '/parts',
   part: (id: string) => `/parts/${id}`,
   revision: (partId: string, revisionId: string) => `/parts/${partId}/revisions/${revisionId}`,
+  comparison: (partId: string, revisionId: string, withId: string) =>
+    `/parts/${partId}/revisions/${revisionId}/comparison?with=${withId}`,
+  characteristicImport: (partId: string, revisionId: string) =>
+    `/parts/${partId}/revisions/${revisionId}/import`,
   requests: '/requests',
   newRequest: '/requests/new',
   request: (id: string) => `/requests/${id}`,
   submission: (id: string) => `/submissions/${id}`,
   measurements: (id: string) => `/submissions/${id}/measurements`,
+  readingImport: (id: string) => `/submissions/${id}/import`,
+  deviations: (id: string) => `/submissions/${id}/deviations`,
   evidence: (id: string) => `/submissions/${id}/evidence`,
   check: (id: string) => `/submissions/${id}/check`,
   warrant: (id: string) => `/submissions/${id}/warrant`,

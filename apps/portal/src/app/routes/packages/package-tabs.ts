@@ -17,5 +17,14 @@ export const hasEvidence = (submission: SubmissionResponse): boolean =>
 /** Parts of a package's page in the order of the work. A page of a package adds its line here. */
 export const packageTabs: readonly PackageTab[] = [
   { label: 'Overview', path: paths.submission },
+  { label: 'Measurements', path: paths.measurements, shows: hasEvidence },
   { label: 'Evidence', path: paths.evidence, shows: hasEvidence },
+  {
+    label: 'Findings',
+    path: paths.check,
+    shows: hasEvidence,
+    count: (submission) => submission.findings.stops,
+  },
+  { label: 'Deviations', path: paths.deviations, shows: hasEvidence },
+  { label: 'Warrant', path: paths.warrant, shows: hasEvidence },
 ];
