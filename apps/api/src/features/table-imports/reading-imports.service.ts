@@ -29,6 +29,8 @@ interface Shown {
   readonly mapping: ReadingMapping | null;
   readonly unit: string | null;
   readonly newPiecesStreamId: string | null;
+  /** Values that stood there when the person looked, by key: another one since then is never written over. */
+  readonly standing: Readonly<Record<string, string>>;
 }
 
 const mostPiecesInStream = 300;
@@ -80,6 +82,7 @@ export async function previewSentReadings(
     mapping: read.mapping,
     unit: null,
     newPiecesStreamId: null,
+    standing: standingOf(read.changes),
   };
   const importId = await deed.transact((manager) =>
     holdTable(manager, deed, 'readings', submissionId, sent, shown),
@@ -108,7 +111,7 @@ export async function previewRemappedReadings(
     throw invalidField('/newPiecesStreamId', 'Choose a stream of this package.');
   }
   const read = await readRows(held, command.settings, command.mapping, context);
-  const shown: Shown = { ...command, settings: read.settings };
+  const shown: Shown = { ...command, settings: read.settings, standing: standingOf(read.changes) };
   await deed.transact((manager) => Promise.resolve(rememberShown(manager, importId, shown)));
   return present(importId, held, shown, read);
 }
@@ -127,7 +130,9 @@ export async function confirmReadings(
   const context = contextOf(reading(deed), before, shown.unit, shown.newPiecesStreamId);
   const read = await readRows(held, shown.settings, shown.mapping, context);
   const chosen = chooser(command.conflicts);
-  const changes = read.changes.filter((change) => change.was === null || chosen(change));
+  const changes = read.changes.filter(
+    (change) => change.was === null || (shown.standing[keyOf(change)] === change.was && chosen(change)),
+  );
   return deed.transact(async (manager) => {
     assertNotConfirmed(await findImport(manager, deed, importId, 'readings'));
     const submission = await loadOpen(manager, deed, held.targetId);
@@ -186,6 +191,9 @@ export async function confirmReadings(
 type Choice = z.output<typeof confirmReadingImportRequest>['conflicts'];
 
 const keyOf = (change: ReadingChangeOfFile): string => `${change.balloon}|${change.piece}`.slice(0, 120);
+
+const standingOf = (changes: readonly ReadingChangeOfFile[]): Record<string, string> =>
+  Object.fromEntries(changes.flatMap((change) => (change.was === null ? [] : [[keyOf(change), change.was]])));
 
 function chooser(conflicts: Choice): (change: ReadingChangeOfFile) => boolean {
   if (conflicts.choice === 'keep') return () => false;
