@@ -59,7 +59,11 @@ export async function createFirstRound(
     name,
     sequence: index + 1,
   }));
-  await manager.insert(SubmissionStream, streams);
+  // The mapper writes generated values back into what it is given, and not always into the same one: it gets copies.
+  await manager.insert(
+    SubmissionStream,
+    streams.map((stream) => ({ ...stream })),
+  );
   writePieces(manager, submissionId, streams, request.piecesPerStream);
   await manager.insert(
     SubmissionElement,
