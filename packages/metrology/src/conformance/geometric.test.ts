@@ -57,6 +57,10 @@ describe('position as a diameter', () => {
     expect(comparePosition(found, { digits: -26n, scale: 2 })).toBe(1);
     expect(positionBeyond(found, { digits: 25n, scale: 2 })).toBe('0.01');
     expect(positionBeyond(found, { digits: 26n, scale: 2 })).toBeNull();
+    const irrational = positionDiameter('0.1', '0.1') as PositionDiameter;
+    expect(positionBeyond(irrational, { digits: 28284271n, scale: 8 })).toBe('0.00000000248');
+    expect(positionBeyond(irrational, { digits: 28n, scale: 2 })).toBe('0.00285');
+    expect(positionBeyond(irrational, { digits: 28284272n, scale: 8 })).toBeNull();
   });
 });
 

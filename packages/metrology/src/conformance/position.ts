@@ -1,5 +1,4 @@
 import {
-  absolute,
   addDecimals,
   compareDecimals,
   decimalOf,
@@ -7,6 +6,7 @@ import {
   formatDecimal,
   multiplyDecimals,
   powerOfTen,
+  subtractDecimals,
   toNumber,
 } from '../decimal/decimal.ts';
 import type { Decimal } from '../decimal/decimal.ts';
@@ -29,14 +29,15 @@ export interface PositionDiameter {
 const FOUR = decimalOf(4n);
 const EXTRA_PLACES = 3;
 
-/** Square root to `places` decimals, rounded half up, with the answer whether it is exact. */
-function squareRoot(square: Decimal, places: number): { root: Decimal; exact: boolean } {
+/** Square root to `places` decimals at least, rounded half up or up, with the answer whether it is exact. */
+function squareRoot(square: Decimal, places: number, up = false): { root: Decimal; exact: boolean } {
   const even = square.scale % 2 === 0 ? square.scale : square.scale + 1;
   const scale = Math.max(even / 2, places);
   const digits = digitsAtScale(square, even) * powerOfTen(2 * scale - even);
   const floor = integerSquareRoot(digits);
   const rest = digits - floor * floor;
-  return { root: { digits: rest > floor ? floor + 1n : floor, scale }, exact: rest === 0n };
+  const away = up ? rest > 0n : rest > floor;
+  return { root: { digits: away ? floor + 1n : floor, scale }, exact: rest === 0n };
 }
 
 /**
@@ -81,10 +82,13 @@ export function comparePosition(position: PositionDiameter, tolerance: Decimal):
     : compareDecimals(position.squared, multiplyDecimals(tolerance, tolerance));
 }
 
-/** How far a position lies beyond the zone, rounded half up to the decimals of `text`; null inside or on it. */
+/**
+ * How far a position lies beyond the zone, null inside or on it. Rounded up, three decimals beyond the finer of the
+ * deviations and the tolerance, so that a position that is out never shows a distance of 0.
+ */
 export function positionBeyond(position: PositionDiameter, tolerance: Decimal): string | null {
   if (comparePosition(position, tolerance) <= 0) return null;
-  const shown = parseDecimal(position.text);
-  if ('undetermined' in shown) return null;
-  return formatDecimal(absolute(addDecimals(shown, { digits: -tolerance.digits, scale: tolerance.scale })));
+  const places = Math.max(position.squared.scale / 2, tolerance.scale);
+  const { root, exact } = squareRoot(position.squared, places + EXTRA_PLACES, true);
+  return formatDecimal(subtractDecimals(exact ? shorten(root, places) : root, tolerance));
 }

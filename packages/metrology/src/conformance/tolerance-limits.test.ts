@@ -150,6 +150,24 @@ describe('limits from the way a drawing states them', () => {
     ).toBe('not-a-number');
   });
 
+  it.each([
+    ['The nominal size', { form: 'symmetric', nominal: '?', tolerance: '1' }],
+    ['The tolerance', { form: 'symmetric', nominal: '1', tolerance: '?' }],
+    ['The nominal size', { form: 'deviations', nominal: '?', lower: '0', upper: '0' }],
+    ['The lower deviation', { form: 'deviations', nominal: '1', lower: '?', upper: '0' }],
+    ['The upper deviation', { form: 'deviations', nominal: '1', lower: '0', upper: '?' }],
+    ['The lower limit', { form: 'limits', lower: '?', upper: '1' }],
+    ['The upper limit', { form: 'limits', lower: '0', upper: '?' }],
+    ['The nominal size', { form: 'limits', lower: '0', upper: '1', nominal: '?' }],
+    ['The upper limit', { form: 'max', upper: '?' }],
+    ['The lower limit', { form: 'min', lower: '?' }],
+  ] as const)('names %s when it cannot be read', (name, spec) => {
+    expect(toleranceLimits(spec)).toMatchObject({
+      code: 'not-a-number',
+      reason: `${name} cannot be read. "?" is not a number: write digits with a point, such as 12.50`,
+    });
+  });
+
   it('gives no limits where the value is for reference', () => {
     expect(toleranceLimits({ form: 'none' })).toMatchObject({ lower: null, upper: null, nominal: null });
     expect(toleranceLimits({ form: 'none', nominal: '12' })).toMatchObject({ nominal: '12' });
