@@ -2,6 +2,7 @@ import type { RequestResponse } from '@trammel/shared/requests';
 import { appendAudit } from '../../database/append-audit.ts';
 import { ApprovalRequest } from '../../database/entities/request.entity.ts';
 import { SupplyLine } from '../../database/entities/supply-line.entity.ts';
+import { changeEvidence } from '../../evidence/refresh-findings.ts';
 import type { Deed } from '../../http/deed.ts';
 import { Conflict, Forbidden } from '../../http/problems.ts';
 import { assertVersion, updateVersioned } from '../../http/versions.ts';
@@ -19,7 +20,7 @@ import { mayWithdraw } from './requests.rules.ts';
 
 /** The supplier takes the request on: from here the package can be filled. */
 export function acknowledgeRequest(deed: Deed, requestId: string): Promise<RequestResponse> {
-  return deed.transact(async (manager) => {
+  return changeEvidence(deed, async (manager) => {
     const { actor, now } = deed;
     const { request, side } = await findRequestForActor(manager, actor, requestId);
     if (side !== 'supplier') throw new Forbidden('Only the supplier acknowledges a request.');
@@ -50,7 +51,7 @@ export function acknowledgeRequest(deed: Deed, requestId: string): Promise<Reque
       const content = requestAcknowledgedMail(person.name, facts, actor.name);
       enqueueMail(manager, now, { kind: 'request-acknowledged', recipient: person.email, ...content });
     }
-    return presentRequest(manager, actor, requestId);
+    return { submissionId: last.id, answer: await presentRequest(manager, actor, requestId) };
   });
 }
 

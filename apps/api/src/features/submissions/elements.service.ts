@@ -5,6 +5,7 @@ import { appendAudit } from '../../database/append-audit.ts';
 import { ElementFile } from '../../database/entities/element-file.entity.ts';
 import { StoredFile } from '../../database/entities/stored-file.entity.ts';
 import { SubmissionElement } from '../../database/entities/submission-element.entity.ts';
+import { changeEvidence } from '../../evidence/refresh-findings.ts';
 import type { Deed } from '../../http/deed.ts';
 import { Conflict, Invalid, invalidField, NotFound } from '../../http/problems.ts';
 import { assertVersion, updateVersioned } from '../../http/versions.ts';
@@ -20,7 +21,7 @@ export function changeElement(
   version: number,
   change: Required<ChangeElementRequest>,
 ): Promise<ElementResponse> {
-  return deed.transact(async (manager) => {
+  return changeEvidence(deed, async (manager) => {
     const found = await findSubmissionOfElement(manager, deed.actor, elementId);
     const submission = requireOpenForSupplier(found);
     const before = await findElement(manager, elementId, found.side);
@@ -37,13 +38,16 @@ export function changeElement(
       before: pick(before),
       after: change,
     });
-    return findElement(manager, elementId, found.side);
+    return {
+      submissionId: submission.id,
+      answer: await findElement(manager, elementId, found.side),
+    };
   });
 }
 
 /** Hangs an uploaded file on an element. Only a file of one's own organisation can be claimed. */
 export function attachFile(deed: Deed, elementId: string, fileId: string): Promise<ElementResponse> {
-  return deed.transact(async (manager) => {
+  return changeEvidence(deed, async (manager) => {
     const found = await findSubmissionOfElement(manager, deed.actor, elementId);
     const submission = requireOpenForSupplier(found);
     const element = await findElement(manager, elementId, found.side);
@@ -75,13 +79,16 @@ export function attachFile(deed: Deed, elementId: string, fileId: string): Promi
       summary: `Attached ${file.name} to ${element.label}`,
       after: { elementId, fileId, sha256: file.sha256 },
     });
-    return findElement(manager, elementId, found.side);
+    return {
+      submissionId: submission.id,
+      answer: await findElement(manager, elementId, found.side),
+    };
   });
 }
 
 /** Takes a file off an element. The stored file itself stays, for rounds it was submitted with. */
 export function detachFile(deed: Deed, elementId: string, fileId: string): Promise<ElementResponse> {
-  return deed.transact(async (manager) => {
+  return changeEvidence(deed, async (manager) => {
     const found = await findSubmissionOfElement(manager, deed.actor, elementId);
     const submission = requireOpenForSupplier(found);
     const element = await findElement(manager, elementId, found.side);
@@ -97,7 +104,10 @@ export function detachFile(deed: Deed, elementId: string, fileId: string): Promi
       summary: `Removed ${file.name} from ${element.label}`,
       before: { elementId, fileId, sha256: file.sha256 },
     });
-    return findElement(manager, elementId, found.side);
+    return {
+      submissionId: submission.id,
+      answer: await findElement(manager, elementId, found.side),
+    };
   });
 }
 

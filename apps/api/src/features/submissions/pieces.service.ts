@@ -7,6 +7,7 @@ import { SamplePiece } from '../../database/entities/sample-piece.entity.ts';
 import { SubmissionStream } from '../../database/entities/submission-stream.entity.ts';
 import type { Submission } from '../../database/entities/submission.entity.ts';
 import { writeStatement } from '../../database/raw.ts';
+import { changeEvidence } from '../../evidence/refresh-findings.ts';
 import { clearSlot, recountRows } from '../../evidence/write-readings.ts';
 import type { Deed } from '../../http/deed.ts';
 import { Conflict, Invalid, invalidField, NotFound, type FieldError } from '../../http/problems.ts';
@@ -48,7 +49,7 @@ export function blockStream(
   version: number,
   change: { blocked: boolean; reason: string },
 ): Promise<StreamResponse> {
-  return deed.transact(async (manager) => {
+  return changeEvidence(deed, async (manager) => {
     const found = await findSubmissionForActor(manager, deed.actor, submissionId);
     const submission = requireOpenForSupplier(found);
     const streams = await findStreams(manager, submissionId);
@@ -80,7 +81,7 @@ export function blockStream(
     });
     const after = (await findStreams(manager, submissionId)).find(({ id }) => id === streamId);
     if (!after) throw new NotFound();
-    return after;
+    return { submissionId, answer: after };
   });
 }
 
@@ -89,7 +90,7 @@ export function addPieces(
   submissionId: string,
   pieces: readonly PieceFields[],
 ): Promise<SubmissionPiecesResponse> {
-  return deed.transact(async (manager) => {
+  return changeEvidence(deed, async (manager) => {
     const found = await findSubmissionForActor(manager, deed.actor, submissionId);
     const submission = requireOpenForSupplier(found);
     const streams = await findStreams(manager, submissionId);
@@ -132,7 +133,8 @@ export function addPieces(
       summary: pieces.length === 1 ? 'Added 1 sample piece' : `Added ${pieces.length} sample pieces`,
       after: pieces.slice(0, 50),
     });
-    return { streams, pieces: await findPieces(manager, submissionId), editable: true };
+    const answer = { streams, pieces: await findPieces(manager, submissionId), editable: true };
+    return { submissionId, answer };
   });
 }
 
@@ -142,7 +144,7 @@ export function changePiece(
   version: number,
   change: PieceFields,
 ): Promise<PieceResponse> {
-  return deed.transact(async (manager) => {
+  return changeEvidence(deed, async (manager) => {
     const found = await findSubmissionOfPiece(manager, deed.actor, pieceId);
     const submission = requireOpenForSupplier(found);
     const before = await findPiece(manager, pieceId);
@@ -169,13 +171,13 @@ export function changePiece(
       before: { label: before.label, madeOn: before.madeOn, lot: before.lot },
       after: { label, madeOn, lot },
     });
-    return findPiece(manager, pieceId);
+    return { submissionId: submission.id, answer: await findPiece(manager, pieceId) };
   });
 }
 
 /** Removes a piece with its readings, which are asked about first, and judges the rows of its stream again. */
 export function removePiece(deed: Deed, pieceId: string, confirmed: boolean): Promise<void> {
-  return deed.transact(async (manager) => {
+  return changeEvidence(deed, async (manager) => {
     const found = await findSubmissionOfPiece(manager, deed.actor, pieceId);
     const submission = requireOpenForSupplier(found);
     const piece = await manager.findOneByOrFail(SamplePiece, { id: pieceId });
@@ -195,6 +197,7 @@ export function removePiece(deed: Deed, pieceId: string, confirmed: boolean): Pr
       summary: `Removed sample piece ${piece.label} with ${cleared} readings`,
       before: { label: piece.label, streamId: piece.streamId, madeOn: piece.madeOn, lot: piece.lot },
     });
+    return { submissionId: submission.id, answer: undefined };
   });
 }
 

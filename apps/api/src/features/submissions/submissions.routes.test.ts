@@ -165,6 +165,8 @@ describe('the head of a package', () => {
       warrantSignature: null,
     });
     expect(own.revision.drawing?.name).toBe('drawing.pdf');
+    // Counted when the request was acknowledged: nothing is measured, and nothing that was asked for is there.
+    expect(own.findings.stops).toBeGreaterThan(0);
     expect(own.routeCard[0]?.stations.find((line) => line.state === 'in-hand')).toMatchObject({
       station: 'measurements',
       who: scene.cast.supplier.name,

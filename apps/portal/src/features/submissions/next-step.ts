@@ -28,6 +28,7 @@ function forSupplier(submission: SubmissionResponse): NextStep {
         return {
           title: `${countOf(counts.unmeasured, 'row has', 'rows have')} no readings yet`,
           text: 'Enter readings in the grid or import them, and attach the evidence that was asked for.',
+          link: { to: paths.measurements(submission.id), label: 'Open the measurements' },
         };
       }
       if (findings.stops > 0) {
@@ -80,7 +81,7 @@ function forCustomer(submission: SubmissionResponse): NextStep {
     case 'in-review':
       return {
         title: abilities.review ? 'Waits for your review' : 'Waits for review',
-        text: `${counts.marked} of ${countOf(counts.rows, 'row is', 'rows are')} marked. Failing, undecided and special rows come first.`,
+        text: `${counts.marked} of ${countOf(counts.characteristics, 'characteristic is', 'characteristics are')} marked. Failing, undecided and special rows come first.`,
       };
     case 'sent-back':
     case 'rejected':

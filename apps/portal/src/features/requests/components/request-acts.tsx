@@ -11,7 +11,10 @@ import { paths } from '../../../lib/paths.ts';
 import { acknowledgeRequest, requestQuery, startNextRound } from '../api.ts';
 import { WithdrawButton } from './withdraw-button.tsx';
 
-/** Deeds on a request that belong to this person now: acknowledge, start the next round, withdraw. */
+/**
+ * Deeds on a request that belong to this person now: acknowledge, start the next round, and on the request's own page
+ * withdraw.
+ */
 export function RequestActs({ requestId, submissionId }: { requestId: string; submissionId?: string }) {
   const { data: request } = useQuery(requestQuery(requestId));
   if (!request) return null;
@@ -21,7 +24,7 @@ export function RequestActs({ requestId, submissionId }: { requestId: string; su
     <>
       <Acknowledge request={request} />
       <NextRound request={request} />
-      {request.state === 'issued' && <WithdrawButton request={request} />}
+      {submissionId === undefined && request.state === 'issued' && <WithdrawButton request={request} />}
     </>
   );
 }

@@ -124,7 +124,7 @@ export function RequestFields(props: RequestFieldsProps) {
         <CheckboxGroup
           id={idOf('reviewerIds')}
           label="Reviewers"
-          hint="They are told by mail. One with the authority to sign is needed for the disposition."
+          hint="Acknowledgement, questions and submission reach them by mail. One with the authority to sign is needed for the disposition."
           error={errorOf('reviewerIds')}
           value={values.reviewerIds}
           onChange={(reviewerIds) => set({ reviewerIds })}

@@ -45,10 +45,10 @@ const columns: DataColumn<RequestListItem>[] = [
     id: 'state',
     header: 'State',
     cell: (row) => (
-      <>
+      <span className="inline-flex flex-wrap items-center gap-x-2">
         {row.packageState ? <PackageStateBadge state={row.packageState} /> : requestStateWords[row.state]}
-        {row.questionOpen && <span className="text-plum">, question open</span>}
-      </>
+        {row.questionOpen && <span className="text-plum">question open</span>}
+      </span>
     ),
   },
   {

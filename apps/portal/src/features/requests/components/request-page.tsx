@@ -11,6 +11,7 @@ import { RequestView } from './request-view.tsx';
 export function RequestPage({ requestId }: { requestId: string }) {
   const { data: request } = useSuspenseQuery(requestQuery(requestId));
   const last = request.rounds.at(-1);
+  const settled = request.state !== 'issued' || !['requested', 'in-preparation'].includes(last?.state ?? '');
   return (
     <div className="flex flex-col gap-5">
       <title>{`Request ${request.number}, ${request.part.number} · Trammel`}</title>
@@ -24,7 +25,7 @@ export function RequestPage({ requestId }: { requestId: string }) {
         site={request.site.name}
         level={request.level}
         request={request.number}
-        due={<DueDay on={request.dueOn} settled={request.state !== 'issued'} />}
+        due={<DueDay on={request.dueOn} settled={settled} />}
         state={last ? <PackageStateBadge state={last.state} /> : requestStateWords[request.state]}
       />
       {request.revision.superseded && request.state !== 'withdrawn' && (

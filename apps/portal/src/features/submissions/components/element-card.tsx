@@ -32,17 +32,20 @@ export function ElementCard({ element, submission, editable }: ElementCardProps)
   return (
     <article
       aria-label={element.label}
-      className={cn('border border-rule bg-sheet', owed && editable && 'border-l-4 border-l-brass')}
+      className={cn(
+        'border-rule not-first:border-t',
+        owed && editable && 'shadow-[inset_3px_0_0_var(--brass)]',
+      )}
     >
-      <div className="flex flex-wrap items-center gap-x-4 gap-y-1 px-3 py-1.5">
-        <h3 className="min-w-0 flex-1 basis-56 font-medium break-words">{element.label}</h3>
+      <div className="grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 gap-y-0.5 px-3 py-1 md:grid-cols-[minmax(0,1fr)_128px_152px_64px_72px]">
+        <h3 className="min-w-0 font-medium break-words max-md:col-span-2">{element.label}</h3>
         <span className="caption">{demandWords[element.demand]}</span>
         <ElementStateMark state={element.state} />
-        <span className="figures text-pencil">{countOf(element.files.length, 'file', 'files')}</span>
+        <span className="text-pencil">{countOf(element.files.length, 'file', 'files')}</span>
         <Button
           weight="quiet"
           size="small"
-          className="no-print"
+          className="no-print justify-self-end"
           aria-expanded={open}
           aria-controls={panel}
           aria-label={`${open ? 'Close' : 'Open'} ${element.label}`}

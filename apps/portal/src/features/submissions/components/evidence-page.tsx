@@ -39,7 +39,7 @@ function Evidence({ submission }: { submission: SubmissionResponse }) {
         <p className="mb-3 text-pencil">
           {open === 0 ? 'Every element asked for is met.' : `${open} of ${asked.length} elements are open.`}
         </p>
-        <div className="flex flex-col gap-2">
+        <div className="border border-rule bg-sheet">
           {asked.map((element) => (
             <ElementCard
               key={element.id}
@@ -54,7 +54,7 @@ function Evidence({ submission }: { submission: SubmissionResponse }) {
             <summary className="cursor-pointer text-pencil">
               Elements that are not required ({others.length})
             </summary>
-            <div className="mt-2 flex flex-col gap-2">
+            <div className="mt-2 border border-rule bg-sheet">
               {others.map((element) => (
                 <ElementCard
                   key={element.id}

@@ -61,10 +61,12 @@ export function PackageOverview({ submission, acts }: { submission: SubmissionRe
                 : ([['Results', 'With the supplier until the warrant is signed']] as [string, ReactNode][])),
               ...(submission.submittedAt === null
                 ? []
-                : ([['Marked', `${counts.marked} of ${counts.rows} rows by the reviewer`]] as [
-                    string,
-                    ReactNode,
-                  ][])),
+                : ([
+                    [
+                      'Marked',
+                      `${counts.marked} of ${countOf(counts.characteristics, 'characteristic', 'characteristics')} by the reviewer`,
+                    ],
+                  ] as [string, ReactNode][])),
             ]}
           />
         </section>

@@ -45,12 +45,10 @@ const columns: DataColumn<ReviewDeskItem>[] = [
     id: 'rows',
     header: 'Needs a human',
     wrap: true,
-    cell: (row) =>
-      row.submittedAt === null ? (
-        <span className="text-pencil">not submitted yet</span>
-      ) : (
-        <RowTally {...row} />
-      ),
+    cell: (row) => {
+      if (waiting.includes(row.state)) return <RowTally {...row} />;
+      return <span className="text-pencil">{row.submittedAt === null ? 'not submitted yet' : '—'}</span>;
+    },
   },
   {
     id: 'deviationsOpen',
@@ -64,17 +62,17 @@ const columns: DataColumn<ReviewDeskItem>[] = [
     header: 'Due',
     sort: true,
     from: 'md',
-    cell: (row) => <DueDay on={row.dueOn} settled={row.submittedAt !== null} />,
+    cell: (row) => <DueDay on={row.dueOn} settled={row.submittedAt !== null || row.state === 'withdrawn'} />,
   },
   {
     id: 'state',
     header: 'State',
     cell: (row) => (
-      <>
+      <span className="inline-flex flex-wrap items-center gap-x-2">
         <PackageStateBadge state={row.state} />
-        {row.round > 1 && <span className="text-pencil">, round {row.round}</span>}
-        {row.questionOpen && <span className="text-plum">, question open</span>}
-      </>
+        {row.round > 1 && <span className="text-pencil">round {row.round}</span>}
+        {row.questionOpen && <span className="text-plum">question open</span>}
+      </span>
     ),
   },
   { id: 'reviewers', header: 'Reviewers', wrap: true, from: 'xl', cell: (row) => row.reviewers.join(', ') },

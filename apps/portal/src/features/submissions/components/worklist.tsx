@@ -63,11 +63,11 @@ const columns: DataColumn<WorklistItem>[] = [
     id: 'state',
     header: 'State',
     cell: (row) => (
-      <>
+      <span className="inline-flex flex-wrap items-center gap-x-2">
         <PackageStateBadge state={row.state} />
-        {row.round > 1 && <span className="text-pencil">, round {row.round}</span>}
-        {row.questionOpen && <span className="text-plum">, question open</span>}
-      </>
+        {row.round > 1 && <span className="text-pencil">round {row.round}</span>}
+        {row.questionOpen && <span className="text-plum">question open</span>}
+      </span>
     ),
   },
   { id: 'customerName', header: 'Customer', from: 'md', cell: (row) => row.customerName },
