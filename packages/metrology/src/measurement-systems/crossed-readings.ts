@@ -41,7 +41,8 @@ export function arrangeCrossed(records: readonly GaugeRecord[]): ArrangedStudy |
   const readings = parts.map((part) =>
     appraisers.map((appraiser) => cells.get(JSON.stringify([part, appraiser])) ?? []),
   );
-  const trials = Math.max(0, ...[...cells.values()].map((cell) => cell.length));
+  let trials = 0;
+  for (const cell of cells.values()) trials = Math.max(trials, cell.length);
   for (const [partPlace, row] of readings.entries()) {
     for (const [appraiserPlace, cell] of row.entries()) {
       if (cell.length !== trials) {

@@ -66,6 +66,27 @@ describe('operating characteristic of n = 52, c = 3 (NIST e-Handbook 6.2.3.2)', 
   });
 });
 
+describe('outgoing quality limit of a lot', () => {
+  it('is the highest point over every whole number of nonconforming pieces', () => {
+    for (const [sampleSize, acceptanceNumber, lotSize] of [
+      [13, 1, 60],
+      [20, 0, 200],
+      [80, 5, 1000],
+      [50, 3, 51],
+    ] as const) {
+      const plan = { sampleSize, acceptanceNumber };
+      const model = { kind: 'lot', lotSize } as const;
+      const qualities = Array.from({ length: lotSize + 1 }, (_, pieces) => pieces / lotSize);
+      const curve = sure(operatingCharacteristic(plan, qualities, model)).points.map(
+        (point) => point.outgoingQuality,
+      );
+      const found = sure(outgoingQualityLimit(plan, model));
+      expect(found.limit).toBeCloseTo(Math.max(...curve), 14);
+      expect(curve[Math.round(found.at * lotSize)]).toBeCloseTo(found.limit, 14);
+    }
+  });
+});
+
 describe('acceptance at the AQL', () => {
   it('matches R for the sixteen reference plans', () => {
     for (const row of single.expected.rows) {
@@ -170,6 +191,15 @@ describe('plans made to order', () => {
     expect([plan.sampleSize, plan.acceptanceNumber]).toEqual([110, 3]);
     expect(plan.producerRisk).toBeLessThanOrEqual(0.05);
     expect(plan.consumerRisk).toBeLessThanOrEqual(0.1);
+  });
+
+  it('finds a plan with a large acceptance number as surely as a small one', () => {
+    const points = { goodQuality: 0.05, producerRisk: 0.05, badQuality: 0.06, consumerRisk: 0.1 };
+    const plan = sure(planFromRiskPoints(points, process));
+    expect(plan.producerRisk).toBeLessThanOrEqual(0.05);
+    expect(plan.consumerRisk).toBeLessThanOrEqual(0.1);
+    // SciPy 1.10.1, every acceptance number from 0 upwards.
+    expect([plan.sampleSize, plan.acceptanceNumber]).toEqual([4445, 246]);
   });
 
   it('needs fewer pieces from a small lot, and all of them when nothing else will do', () => {

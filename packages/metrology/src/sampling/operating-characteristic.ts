@@ -129,7 +129,7 @@ export interface OutgoingQualityLimit {
 
 /**
  * Average outgoing quality limit: the maximum over the incoming quality of p Pa (N - n)/N (without the factor when no lot size is given).
- * The curve of a single plan rises to one peak; for a lot every whole number of nonconforming pieces is looked at.
+ * The curve of a single plan rises to one peak; for a lot the peak is sought among whole numbers of nonconforming pieces.
  */
 export function outgoingQualityLimit(
   plan: SinglePlan,
@@ -143,23 +143,34 @@ export function outgoingQualityLimit(
     return undetermined('lot-size', 'The lot size must be at least the sample size');
   }
   const aoq = (quality: number): number => outgoing(quality, accepting(plan, quality, model), plan, lotSize);
-  let at = 0;
-  if (model.kind === 'lot') {
-    for (let pieces = 1; pieces <= model.lotSize; pieces += 1) {
-      const quality = pieces / model.lotSize;
-      if (aoq(quality) > aoq(at)) at = quality;
-    }
-  } else {
-    const far = qualityAtAcceptance(plan, 1e-6, model);
-    if (isUndetermined(far)) return far;
-    at = peak(aoq, far);
-  }
+  const far = qualityAtAcceptance(plan, 1e-6, model);
+  if (isUndetermined(far)) return far;
+  const at =
+    model.kind === 'lot'
+      ? wholePeak(aoq, Math.round(far * model.lotSize) + 1, model.lotSize)
+      : peak(aoq, far);
   return {
     method: MODEL_NAMES[model.kind],
     limit: aoq(at),
     at,
     inputs: { plan, model, lotSize: lotSize ?? null },
   };
+}
+
+/** The same among whole pieces 0 to `end` of a lot; near the top, where neighbours may be alike, each is looked at. */
+function wholePeak(value: (quality: number) => number, end: number, lotSize: number): number {
+  let low = 0;
+  let high = Math.min(end, lotSize);
+  while (high - low > 8) {
+    const third = Math.floor((high - low) / 3);
+    if (value((low + third) / lotSize) < value((high - third) / lotSize)) low += third;
+    else high -= third;
+  }
+  let best = low;
+  for (let pieces = low + 1; pieces <= high; pieces += 1) {
+    if (value(pieces / lotSize) > value(best / lotSize)) best = pieces;
+  }
+  return best / lotSize;
 }
 
 /** Place of the maximum of a one-peaked function on (0, end), by golden section. */

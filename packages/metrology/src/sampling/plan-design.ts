@@ -27,7 +27,7 @@ const LARGEST_SAMPLE = 1_000_000;
 /**
  * Smallest single sampling plan through two risk points: the smallest n, and with it the smallest c, for which good quality is refused with at
  * most the producer's risk and bad quality accepted with at most the consumer's risk. For each c from 0 upwards the smallest n that meets the
- * consumer's risk is found; the first c that then also meets the producer's risk is the answer.
+ * consumer's risk is found; the smallest c that then also meets the producer's risk is the answer.
  *
  * For a lot, good quality is rounded down and bad quality up to whole pieces, so both promises hold. Undetermined: qualities not in order,
  * risks outside (0, 1), or no plan within the lot (then inspect every piece) or within a million pieces.
@@ -38,19 +38,24 @@ export function planFromRiskPoints(points: TwoRiskPoints, model: SamplingModel):
   if (fault) return fault;
   const { good, bad } = wholePieces(points, model);
   const largest = model.kind === 'lot' ? model.lotSize : LARGEST_SAMPLE;
-  for (let c = 0; c < largest; c += 1) {
+  const planAt = (c: number): SinglePlan | undefined => {
     const n = smallestSample(c, bad, consumerRisk, model, largest);
-    if (n === undefined) break;
-    const plan = { sampleSize: n, acceptanceNumber: c };
-    if (1 - accepting(plan, good, model) <= producerRisk) {
-      return {
-        ...plan,
-        method: `smallest plan through two risk points, ${MODEL_NAMES[model.kind]}`,
-        inputs: { points, model },
-        producerRisk: 1 - accepting(plan, good, model),
-        consumerRisk: accepting(plan, bad, model),
-      };
-    }
+    return n === undefined ? undefined : { sampleSize: n, acceptanceNumber: c };
+  };
+  // Past the end of the lot no plan is better; there the search may stop as it would at a plan that serves.
+  const serves = (c: number): boolean => {
+    const plan = planAt(c);
+    return !plan || 1 - accepting(plan, good, model) <= producerRisk;
+  };
+  const plan = planAt(smallestServing(serves, largest));
+  if (plan) {
+    return {
+      ...plan,
+      method: `smallest plan through two risk points, ${MODEL_NAMES[model.kind]}`,
+      inputs: { points, model },
+      producerRisk: 1 - accepting(plan, good, model),
+      consumerRisk: accepting(plan, bad, model),
+    };
   }
   return undetermined(
     'no-plan',
@@ -128,6 +133,30 @@ function wholePieces(points: TwoRiskPoints, model: SamplingModel): { good: numbe
     good: Math.floor(points.goodQuality * lotSize + hair) / lotSize,
     bad: Math.max(1, Math.ceil(points.badQuality * lotSize - hair)) / lotSize,
   };
+}
+
+/** Acceptance numbers tried one by one before the search takes longer steps. */
+const ONE_BY_ONE = 100;
+
+/**
+ * The smallest acceptance number that serves. The producer's risk falls as the number grows but for the jitter of whole pieces, so beyond the
+ * first hundred it is bracketed by doubling and halved, and then followed down while the number before serves too.
+ */
+function smallestServing(serves: (c: number) => boolean, largest: number): number {
+  for (let c = 0; c <= Math.min(ONE_BY_ONE, largest); c += 1) if (serves(c)) return c;
+  let low = ONE_BY_ONE;
+  let high = ONE_BY_ONE * 2;
+  while (high < largest && !serves(high)) {
+    low = high;
+    high *= 2;
+  }
+  while (high - low > 1) {
+    const middle = Math.floor((low + high) / 2);
+    if (serves(middle)) high = middle;
+    else low = middle;
+  }
+  while (high > ONE_BY_ONE && serves(high - 1)) high -= 1;
+  return high;
 }
 
 /** Acceptance falls as the sample grows, so the smallest sample is found by halving. */

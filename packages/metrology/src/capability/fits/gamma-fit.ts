@@ -11,9 +11,13 @@ import type { Distribution, FittedModel } from './fitted-model.ts';
 import { onBound } from './positive-readings.ts';
 import type { PositiveReadings } from './positive-readings.ts';
 
+/** Beyond it the tails cost time that grows with the root of the shape, and differ from the normal ones by less than a reading can show. */
+const LARGEST_SHAPE = 1e5;
+
 /**
  * Gamma distribution of two parameters by maximum likelihood: the shape k solves ln k - digamma(k) = ln(mean) - mean(ln) by Newton in ln k from
- * Minka's starting value; scale = mean/k. Undetermined with a reading on the bound.
+ * Minka's starting value; scale = mean/k. Undetermined with a reading on the bound, and
+ * above a shape of 1e5 (a spread under 0.3 % of the mean).
  */
 export function fitGamma(readings: PositiveReadings): FittedModel | Undetermined {
   const refused = onBound(readings);
@@ -31,6 +35,12 @@ export function fitGamma(readings: PositiveReadings): FittedModel | Undetermined
     const change = (value - gap) / (shape * slope);
     shape *= Math.exp(-change);
     if (Math.abs(change) < 1e-14) break;
+  }
+  if (!(shape < LARGEST_SHAPE)) {
+    return undetermined(
+      'no-fit',
+      'The readings spread so little around their mean that gamma is the normal distribution',
+    );
   }
   const scale = mean / shape;
   return {
