@@ -88,7 +88,7 @@ export function createApp(dependencies: Dependencies): App {
     db,
     hashing,
     keys: new IdempotencyKeys(db.reader),
-    limits: new RateLimits(dependencies.rateLimits),
+    limits: new RateLimits(dependencies.rateLimits, clock),
     authentication: createAuthentication({
       secret: config.secrets.session,
       publicUrl: config.publicUrl,
@@ -144,7 +144,7 @@ export function createApp(dependencies: Dependencies): App {
   auditRoutes(router, anchors);
   documentsRoutes(router, store);
 
-  app.use('/api', router.express, noSuchRoute(router));
+  app.use('/api', router.handle, noSuchRoute(router));
   app.use(portalFiles(config.portalDir));
   app.use((_req, _res, next) => next(new NotFound('There is no such address.')));
   app.use(createErrorHandler(log));

@@ -10,6 +10,7 @@ import type { Actor } from './actor.ts';
 const issuer = 'trammel';
 const audience = 'trammel-portal';
 const skewSeconds = 30;
+const mostRemembered = 5000;
 
 interface Claims {
   readonly sid: string;
@@ -61,30 +62,44 @@ export function createAuthentication(options: AuthenticateOptions): Authenticati
         ignoreExpiration: true,
         jsonWebTokenOptions: { ignoreNotBefore: true },
       },
-      (claims: Claims, done) => {
-        const seconds = clock.millis() / 1000;
-        const inTime = seconds > claims.nbf - skewSeconds && seconds < claims.exp + skewSeconds;
-        const usable = claims.use === 'session' && typeof claims.sid === 'string' && inTime;
-        done(null, usable ? (findActor(claims.sid) ?? false) : false);
-      },
+      (claims: Claims, done) => done(null, claims),
     ),
   );
 
+  const verify = (req: Request, res: Response) =>
+    new Promise<Claims | null>((resolve, reject) => {
+      const check = passport.authenticate(
+        'jwt',
+        { session: false },
+        (error: unknown, claims: Claims | false) => {
+          if (error) reject(error instanceof Error ? error : new Error(String(error)));
+          else resolve(claims || null);
+        },
+      ) as (req: Request, res: Response, next: () => void) => void;
+      check(req, res, () => resolve(null));
+    });
+
+  // The signature of the same bytes is the same each time; session, person and times are looked up at every request.
+  const verified = new Map<string, Claims>();
+  const remember = (token: string, claims: Claims) => {
+    if (verified.has(token)) return;
+    if (verified.size >= mostRemembered) verified.clear();
+    verified.set(token, claims);
+  };
+
   return {
     csrfKey: purposeKey(options.secret, 'page token'),
-    actorOf: (req, res) => {
-      if (req.headers.cookie === undefined) return Promise.resolve(null);
-      return new Promise((resolve, reject) => {
-        const check = passport.authenticate(
-          'jwt',
-          { session: false },
-          (error: unknown, actor: Actor | false) => {
-            if (error) reject(error instanceof Error ? error : new Error(String(error)));
-            else resolve(actor || null);
-          },
-        ) as (req: Request, res: Response, next: () => void) => void;
-        check(req, res, () => resolve(null));
-      });
+    actorOf: async (req, res) => {
+      if (req.headers.cookie === undefined) return null;
+      const token = parseCookie(req.headers.cookie)[cookieName];
+      if (token === undefined) return null;
+      const claims = verified.get(token) ?? (await verify(req, res));
+      if (!claims) return null;
+      remember(token, claims);
+      const seconds = clock.millis() / 1000;
+      const inTime = seconds > claims.nbf - skewSeconds && seconds < claims.exp + skewSeconds;
+      const usable = claims.use === 'session' && typeof claims.sid === 'string' && inTime;
+      return usable ? findActor(claims.sid) : null;
     },
     issue: (res, sessionId, expiresAt) => {
       const exp = Math.floor(Date.parse(expiresAt) / 1000);

@@ -19,9 +19,24 @@ export function assertSameOrigin(req: Request, publicOrigin: string): void {
   if (!ours) throw new Forbidden('This did not come from a page of this installation.');
 }
 
+const expectedTokens = new WeakMap<Buffer, Map<string, Buffer>>();
+const mostRemembered = 5000;
+
+/** Worked out once a session: the same words give the same token each time. */
+function expectedToken(key: Buffer, sessionId: string): Buffer {
+  let known = expectedTokens.get(key);
+  if (!known) expectedTokens.set(key, (known = new Map()));
+  let token = known.get(sessionId);
+  if (!token) {
+    if (known.size >= mostRemembered) known.clear();
+    known.set(sessionId, (token = Buffer.from(csrfToken(key, sessionId))));
+  }
+  return token;
+}
+
 export function assertCsrfToken(req: Request, key: Buffer, sessionId: string): void {
   const given = Buffer.from(req.get(csrfHeader) ?? '');
-  const expected = Buffer.from(csrfToken(key, sessionId));
+  const expected = expectedToken(key, sessionId);
   if (given.length !== expected.length || !timingSafeEqual(given, expected)) {
     throw new Forbidden('This page is out of date. Reload it and try again.');
   }

@@ -29,7 +29,7 @@ export function createErrorHandler(log: Logger): ErrorRequestHandler {
       next(error);
       return;
     }
-    writeProblem(res, problem, String(req.id));
+    writeProblem(res, problem, req.id);
   };
 }
 

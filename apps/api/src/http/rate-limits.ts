@@ -1,6 +1,6 @@
-import type { Request, RequestHandler, Response } from 'express';
-import { ipKeyGenerator, rateLimit } from 'express-rate-limit';
-import { run } from './body.ts';
+import type { Request } from 'express';
+import type { Clock } from '../clock.ts';
+import type { Actor } from './actor.ts';
 import { TooMany } from './problems.ts';
 
 export interface RateLimitSettings {
@@ -19,82 +19,75 @@ export const ordinaryLimits: RateLimitSettings = {
   enabled: true,
 };
 
-interface Caller {
-  readonly userId: string;
-  readonly organisationId: string;
-}
-
 /** Counters by address, person and organisation, so that one organisation cannot take the service from another. */
 export class RateLimits {
-  private readonly address: RequestHandler;
-  private readonly person: RequestHandler;
-  private readonly organisation: RequestHandler;
-  private readonly ofRoute = new Map<string, RequestHandler>();
+  private readonly address: Counter;
+  private readonly person: Counter;
+  private readonly organisation: Counter;
+  private readonly ofRoute = new Map<string, Counter>();
 
-  constructor(private readonly settings: RateLimitSettings) {
-    this.address = limiter(settings.perAddress, 60, (req) => addressOf(req));
-    this.person = limiter(settings.perPerson, 60, (_req, res) => callerOf(res)?.userId ?? '');
-    this.organisation = limiter(
-      settings.perOrganisation,
-      60,
-      (_req, res) => callerOf(res)?.organisationId ?? '',
-    );
+  constructor(
+    private readonly settings: RateLimitSettings,
+    private readonly clock: Clock,
+  ) {
+    this.address = new Counter(settings.perAddress, 60);
+    this.person = new Counter(settings.perPerson, 60);
+    this.organisation = new Counter(settings.perOrganisation, 60);
   }
 
-  async beforeSignIn(req: Request, res: Response): Promise<void> {
-    if (this.settings.enabled) await run(this.address, req, res);
+  beforeSignIn(req: Request): void {
+    if (this.settings.enabled) this.address.take(addressOf(req), this.clock.millis());
   }
 
-  async afterSignIn(req: Request, res: Response): Promise<void> {
-    if (!this.settings.enabled || !callerOf(res)) return;
-    await run(this.person, req, res);
-    await run(this.organisation, req, res);
-  }
-
-  async ofOne(
-    name: string,
-    limit: { max: number; seconds: number },
-    req: Request,
-    res: Response,
-  ): Promise<void> {
+  afterSignIn(actor: Actor): void {
     if (!this.settings.enabled) return;
-    let known = this.ofRoute.get(name);
-    if (!known) {
-      known = limiter(
-        limit.max,
-        limit.seconds,
-        (request, response) => callerOf(response)?.userId ?? addressOf(request),
-      );
-      this.ofRoute.set(name, known);
-    }
-    await run(known, req, res);
+    const now = this.clock.millis();
+    this.person.take(actor.userId, now);
+    this.organisation.take(actor.organisationId, now);
+  }
+
+  /** A stricter limit of one route, by person or, before sign-in, by address. */
+  ofOne(name: string, limit: { max: number; seconds: number }, req: Request, actor: Actor | null): void {
+    if (!this.settings.enabled) return;
+    let counter = this.ofRoute.get(name);
+    if (!counter) this.ofRoute.set(name, (counter = new Counter(limit.max, limit.seconds)));
+    counter.take(actor?.userId ?? addressOf(req), this.clock.millis());
   }
 }
 
-function limiter(
-  max: number,
-  seconds: number,
-  keyGenerator: (req: Request, res: Response) => string,
-): RequestHandler {
-  return rateLimit({
-    windowMs: seconds * 1000,
-    limit: max,
-    keyGenerator,
-    standardHeaders: false,
-    legacyHeaders: false,
-    validate: false,
-    handler: (req, _res, next) => {
-      const info = (req as Request & { rateLimit?: { resetTime?: Date } }).rateLimit;
-      const wait = info?.resetTime ? Math.ceil((info.resetTime.getTime() - Date.now()) / 1000) : seconds;
-      next(new TooMany(Math.max(1, wait)));
-    },
-  });
+const mostKeys = 50_000;
+
+class Counter {
+  private readonly windows = new Map<string, { count: number; endsAt: number }>();
+
+  constructor(
+    private readonly max: number,
+    private readonly seconds: number,
+  ) {}
+
+  take(key: string, now: number): void {
+    const window = this.windows.get(key);
+    if (window === undefined || window.endsAt <= now) {
+      if (this.windows.size >= mostKeys) this.sweep(now);
+      this.windows.set(key, { count: 1, endsAt: now + this.seconds * 1000 });
+      return;
+    }
+    window.count += 1;
+    if (window.count > this.max) throw new TooMany(Math.ceil((window.endsAt - now) / 1000));
+  }
+
+  private sweep(now: number): void {
+    for (const [key, window] of this.windows) if (window.endsAt <= now) this.windows.delete(key);
+    // All of them living means a flood of addresses: the oldest give way, so that memory stays bounded.
+    for (const key of this.windows.keys()) {
+      if (this.windows.size < mostKeys) break;
+      this.windows.delete(key);
+    }
+  }
 }
 
+/** An IPv6 caller owns a whole /64: counting single addresses would count nothing. */
 function addressOf(req: Request): string {
-  return ipKeyGenerator(req.ip ?? '');
-}
-
-function callerOf(res: Response): Caller | undefined {
-  return res.locals.actor as Caller | undefined;
+  const address = req.ip ?? '';
+  return address.includes(':') && !address.includes('.') ? address.split(':').slice(0, 4).join(':') : address;
 }

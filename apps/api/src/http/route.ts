@@ -1,9 +1,8 @@
 import type { Permission } from '@trammel/shared/roles';
-import type { Request, RequestHandler, Response, Router } from 'express';
+import type { Request, RequestHandler, Response } from 'express';
 import type { z } from 'zod';
 import type { Deed } from './deed.ts';
 import type { ApiRouter } from './api-router.ts';
-import { serve } from './serve.ts';
 
 export type Method = 'get' | 'post' | 'put' | 'patch' | 'delete';
 /** Who may call at all (of a list, whoever holds one); on which objects is settled where each object is loaded. */
@@ -111,6 +110,4 @@ export function route<
     handler: definition.handler,
   };
   router.add(record);
-  const express: Router = router.express;
-  express[record.method](record.path, (req, res) => serve(router.core, record, req, res));
 }

@@ -73,7 +73,7 @@ function declareTrialRoutes(): void {
 }
 
 describe('an act with a key', () => {
-  const act = (client: Client, key: object, name = 'once') =>
+  const act = (client: Client, key: Record<string, string>, name = 'once') =>
     client.post('/api/trial/acts').set(key).send({ name });
 
   it('happens once for any number of presses, and answers the same bytes', async () => {

@@ -20,25 +20,25 @@ const noQuery = z.strictObject({});
 export async function serve(core: Core, route: RouteRecord, req: Request, res: Response): Promise<void> {
   res.locals.route = `${route.method} ${route.path}`;
   res.setHeader('Cache-Control', 'no-store');
-  await core.limits.beforeSignIn(req, res);
+  core.limits.beforeSignIn(req);
   const actor = route.permission === 'public' ? null : await authorize(core, route, req, res);
   if (route.method !== 'get') {
     assertSameOrigin(req, core.config.publicUrl);
     if (actor) assertCsrfToken(req, core.authentication.csrfKey, actor.sessionId);
   }
-  if (route.limit) await core.limits.ofOne(`${route.method} ${route.path}`, route.limit, req, res);
+  if (route.limit) core.limits.ofOne(`${route.method} ${route.path}`, route.limit, req, actor);
 
   const params = route.params ? readParams(route.params, req) : undefined;
   const version = route.ifMatch ? requireVersion(req.get('if-match')) : undefined;
   const key = route.idempotent ? readKey(req) : undefined;
-  const query = validate(route.query ?? noQuery, req.query, 'query');
+  const query = readQuery(route, req);
   if (route.upload) await run(route.upload, req, res);
   const body = await readBody(route, req, res);
 
   const deed: Omit<Deed, 'actor'> & { actor: Actor | null } = {
     actor,
     now: core.clock.now(),
-    requestId: String(req.id),
+    requestId: req.id,
     publicUrl: core.config.publicUrl,
     transact: core.db.writeTransaction,
     reader: core.db.reader,
@@ -60,7 +60,7 @@ async function authorize(core: Core, route: RouteRecord, req: Request, res: Resp
   const actor = await core.authentication.actorOf(req, res);
   if (!actor) throw new Unauthenticated();
   res.locals.actor = actor;
-  await core.limits.afterSignIn(req, res);
+  core.limits.afterSignIn(actor);
   if (!mayCall(route.permission, actor)) throw new Forbidden();
   return actor;
 }
@@ -75,6 +75,13 @@ function readParams(schema: z.ZodType, req: Request): unknown {
   const parsed = schema.safeParse(req.params);
   if (!parsed.success) throw new NotFound();
   return parsed.data;
+}
+
+/** Express parses the query anew at each look: it is looked at once, and only where there is one. */
+function readQuery(route: RouteRecord, req: Request): unknown {
+  const sent = req.url.includes('?');
+  if (!route.query && !sent) return undefined;
+  return validate(route.query ?? noQuery, sent ? req.query : {}, 'query');
 }
 
 function readKey(req: Request): string {

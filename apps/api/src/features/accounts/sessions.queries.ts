@@ -11,6 +11,7 @@ export const absoluteLimit = 12 * HOUR;
 interface Row {
   sessionId: string;
   lastSeenAt: string;
+  expiresAt: string;
   userId: string;
   name: string;
   email: string;
@@ -24,6 +25,7 @@ interface Row {
 export interface LivingSession {
   readonly actor: Actor;
   readonly lastSeenAt: string;
+  readonly expiresAt: string;
 }
 
 const granted = new Map<string, { roles: Role[]; permissions: ReadonlySet<Permission> }>();
@@ -32,7 +34,8 @@ const granted = new Map<string, { roles: Role[]; permissions: ReadonlySet<Permis
 export function findLivingSession(reader: DataSource, sessionId: string, now: string): LivingSession | null {
   const row = readStatement(
     reader,
-    `SELECT s.id AS sessionId, s.last_seen_at AS lastSeenAt, u.id AS userId, u.name, u.email, u.title, u.roles,
+    `SELECT s.id AS sessionId, s.last_seen_at AS lastSeenAt, s.expires_at AS expiresAt,
+       u.id AS userId, u.name, u.email, u.title, u.roles,
        u.may_sign AS maySign, o.id AS organisationId, o.name AS organisationName
      FROM sessions s JOIN users u ON u.id = s.user_id JOIN organisations o ON o.id = u.organisation_id
      WHERE s.id = ? AND s.revoked_at IS NULL AND s.expires_at > ? AND s.last_seen_at > ? AND u.disabled_at IS NULL`,
@@ -41,6 +44,7 @@ export function findLivingSession(reader: DataSource, sessionId: string, now: st
   const { roles, permissions } = rightsOf(row.roles, row.maySign === 1);
   return {
     lastSeenAt: row.lastSeenAt,
+    expiresAt: row.expiresAt,
     actor: {
       userId: row.userId,
       organisationId: row.organisationId,
@@ -68,11 +72,9 @@ function rightsOf(rolesJson: string, maySign: boolean) {
   return known;
 }
 
-export function findSessionEnd(reader: DataSource, sessionId: string): string {
-  const row = readStatement(reader, 'SELECT expires_at AS expiresAt FROM sessions WHERE id = ?').get(
-    sessionId,
-  );
-  return (row as { expiresAt: string }).expiresAt;
+/** Changes whenever another connection, such as the writer's, has committed anything. */
+export function dataVersion(reader: DataSource): number {
+  return (readStatement(reader, 'PRAGMA data_version').get() as { data_version: number }).data_version;
 }
 
 /** Living sessions of the person, newest use first. */

@@ -6,7 +6,7 @@ import type { ApiRouter } from '../../http/api-router.ts';
 import { route } from '../../http/route.ts';
 import { Unauthenticated } from '../../http/problems.ts';
 import { presentSession } from './session.presenter.ts';
-import { findLivingSession, findOwnSessions, findSessionEnd } from './sessions.queries.ts';
+import { findLivingSession, findOwnSessions } from './sessions.queries.ts';
 import { endAllSessions, endSession } from './sessions.service.ts';
 import { signIn } from './sign-in.service.ts';
 
@@ -19,7 +19,7 @@ export function sessionsRoutes(router: ApiRouter): void {
     if (!living) throw new Unauthenticated();
     return presentSession(living.actor, {
       csrfToken: csrfToken(authentication.csrfKey, sessionId),
-      expiresAt: findSessionEnd(db.reader, sessionId),
+      expiresAt: living.expiresAt,
       demo: config.demo,
     });
   };
