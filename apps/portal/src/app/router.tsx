@@ -31,7 +31,13 @@ export function Router() {
   return (
     <Routes>
       <Route element={<PublicLayout />}>{elements(true)}</Route>
-      <Route element={<DeskLayout />}>
+      <Route
+        element={
+          <Suspense fallback={<Loading label="Loading the portal" />}>
+            <DeskLayout />
+          </Suspense>
+        }
+      >
         <Route index element={<ToDesk />} />
         {elements(false)}
         <Route path="*" element={<NotFound />} />
