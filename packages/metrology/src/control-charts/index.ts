@@ -20,8 +20,8 @@ export type {
   SubgroupChartInput,
   SubgroupChartKind,
 } from './subgroup-chart.ts';
-export { withinSpread } from './subgroups.ts';
-export type { WithinSpread } from './subgroups.ts';
+export { subgroupSpread } from './subgroups.ts';
+export type { SubgroupSpread } from './subgroups.ts';
 export { cusumChart, ewmaChart } from './time-weighted-charts.ts';
 export type { CusumChart, EwmaChart, TimeWeightedInput } from './time-weighted-charts.ts';
 export { judgeProcess, POINTS_TO_SHOW_CONTROL } from './verdict.ts';

@@ -13,7 +13,7 @@ import { summarize } from '../statistics/summarize.ts';
 import { individualsChart } from './individuals-chart.ts';
 import { subgroupChart } from './subgroup-chart.ts';
 import type { SubgroupChartInput } from './subgroup-chart.ts';
-import { withinSpread } from './subgroups.ts';
+import { subgroupSpread } from './subgroups.ts';
 
 function known<T>(result: T | Undetermined): T {
   if (isUndetermined(result)) throw new Error(result.reason);
@@ -153,7 +153,7 @@ describe('limits from a phase', () => {
 
 it('estimates the deviation within unequal subgroups four ways', () => {
   const { subgroups } = unequal.inputs;
-  const within = known(withinSpread(subgroups));
+  const within = known(subgroupSpread(subgroups));
   near(within.pooled, unequal.expected.pooled_s);
   near(within.pooledUnbiased, unequal.expected.pooled_s_unbiased);
   near(within.fromRanges, unequal.expected.mean_R_over_d2);

@@ -12,7 +12,7 @@ import type { RunRule } from './rules.ts';
 import { chartSeries } from './series.ts';
 import type { ChartSeries, Statistic } from './series.ts';
 import { describeSubgroups, spreadWithin } from './subgroups.ts';
-import type { Subgroup, WithinSpread } from './subgroups.ts';
+import type { Subgroup, SubgroupSpread } from './subgroups.ts';
 import { judgeProcess } from './verdict.ts';
 import type { ProcessVerdict } from './verdict.ts';
 
@@ -51,7 +51,7 @@ export interface SubgroupChart {
   /** R̄ or s̄ of the subgroups that make the limits. */
   readonly meanSpread: number;
   /** Null when the limits are frozen. */
-  readonly within: WithinSpread | null;
+  readonly within: SubgroupSpread | null;
   readonly location: ChartSeries;
   readonly spread: ChartSeries;
   readonly verdict: ProcessVerdict;
@@ -67,7 +67,7 @@ function centreOf(groups: readonly Subgroup[], kind: SubgroupChartKind): number 
 }
 
 function sigmaOf(
-  within: WithinSpread,
+  within: SubgroupSpread,
   input: SubgroupChartInput,
 ): Pick<SubgroupChart, 'sigmaWithin' | 'sigmaMethod'> {
   if (input.kind !== 'mean-and-deviation')

@@ -40,7 +40,7 @@ export function describeSubgroups(subgroups: readonly (readonly Reading[])[]): S
 }
 
 /** Estimates of the deviation within subgroups, each named; sizes may differ. */
-export interface WithinSpread {
+export interface SubgroupSpread {
   readonly subgroups: number;
   /** Σ(n − 1), the degrees of freedom of the pooled deviation. */
   readonly degreesOfFreedom: number;
@@ -55,7 +55,7 @@ export interface WithinSpread {
 }
 
 /** Within-subgroup deviation of subgroups already described, at least one. */
-export function spreadWithin(groups: readonly Subgroup[]): WithinSpread {
+export function spreadWithin(groups: readonly Subgroup[]): SubgroupSpread {
   const mean = (of: (group: Subgroup) => number) =>
     groups.reduce((sum, group) => sum + of(group), 0) / groups.length;
   const degreesOfFreedom = groups.reduce((sum, group) => sum + group.n - 1, 0);
@@ -75,7 +75,7 @@ export function spreadWithin(groups: readonly Subgroup[]): WithinSpread {
  * Deviation within subgroups by every common estimator: R̄/d2, s̄/c4, pooled, and pooled made unbiased.
  * Subgroups may differ in size; the averages of R/d2 and s/c4 are then unweighted, as is usual.
  */
-export function withinSpread(subgroups: readonly (readonly Reading[])[]): WithinSpread | Undetermined {
+export function subgroupSpread(subgroups: readonly (readonly Reading[])[]): SubgroupSpread | Undetermined {
   if (subgroups.length === 0) return undetermined('too-few', 'There are no subgroups');
   const groups = describeSubgroups(subgroups);
   return isUndetermined(groups) ? groups : spreadWithin(groups);
