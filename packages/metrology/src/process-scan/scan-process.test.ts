@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { NELSON_RULES } from '../control-charts/rules.ts';
+import { individualsChart } from '../control-charts/individuals-chart.ts';
 import { applyRunRules } from '../control-charts/run-rules.ts';
 import { isUndetermined } from '../result.ts';
 import flow from '../testing/reference/nist-imr-flowrate.json' with { type: 'json' };
@@ -67,6 +68,22 @@ describe('the scan of a process', () => {
     expect(found.naturalLimits.lower).toBeCloseTo(x_lcl, 8);
     expect(found.naturalLimits.upper).toBeCloseTo(x_ucl, 8);
     expect(found.movingRangeUpper).toBeCloseTo(mr_ucl, 9);
+  });
+
+  it('says of control what the chart of individuals says with the same rules', () => {
+    fc.assert(
+      fc.property(fc.array(fc.integer({ min: -9, max: 9 }), { minLength: 15, maxLength: 30 }), (values) => {
+        const chart = individualsChart({ readings: values, rules: { individuals: NELSON_RULES } });
+        const found = scanProcess(values, { lower: -20, upper: 20 });
+        if (isUndetermined(chart) || isUndetermined(found)) {
+          expect([isUndetermined(chart), isUndetermined(found)]).toEqual([true, true]);
+          return;
+        }
+        expect(found.control).toBe(chart.verdict.state);
+        expect(found.withinSigma).toBeCloseTo(chart.sigmaWithin, 12);
+      }),
+      { numRuns: 300 },
+    );
   });
 
   it('relates process and tolerance by both spreads', () => {

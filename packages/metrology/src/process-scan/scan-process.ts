@@ -1,6 +1,7 @@
 import type { NumericLimits } from '../conformance/conformance-probability.ts';
 import { NELSON_RULES } from '../control-charts/rules.ts';
 import type { RunRule } from '../control-charts/rules.ts';
+import { POINTS_TO_SHOW_CONTROL } from '../control-charts/verdict.ts';
 import { undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
 import { signalBytes } from './run-registers.ts';
@@ -10,9 +11,6 @@ const D2_OF_TWO = 2 / Math.sqrt(Math.PI);
 /** d3 for two readings: the standard deviation of the range of a pair is σ·√(2 − 4/π). */
 const D3_OF_TWO = Math.sqrt(2 - 4 / Math.PI);
 const UPPER_RANGE_FACTOR = 1 + (3 * D3_OF_TWO) / D2_OF_TWO;
-
-/** Fewest readings for which the scan states a verdict on control (common practice: at least twenty plotted points). */
-export const FEWEST_FOR_CONTROL = 20;
 
 /** Everything a row of a worklist shows of one characteristic, from single readings in production order. */
 export interface ProcessScan {
@@ -161,7 +159,11 @@ export function scanProcess(values: ArrayLike<number>, limits: NumericLimits): P
   const signalCounts = countSignals(signals);
   const movingRangesBeyond = rangesBeyond(values, movingRangeUpper);
   const clean = movingRangesBeyond === 0 && NELSON_RULES.every((rule) => signalCounts[rule] === 0);
-  const control = !clean ? 'not-in-control' : values.length < FEWEST_FOR_CONTROL ? 'too-few' : 'in-control';
+  const control = !clean
+    ? 'not-in-control'
+    : values.length < POINTS_TO_SHOW_CONTROL
+      ? 'too-few'
+      : 'in-control';
   return {
     method: 'individuals and moving ranges of two, Nelson tests 1 to 8',
     n: values.length,
