@@ -1,6 +1,7 @@
 import tailwindcss from '@tailwindcss/vite';
 import react from '@vitejs/plugin-react';
 import { defineConfig } from 'vitest/config';
+import { pdfResources } from './apps/portal/pdf-resources.ts';
 
 const apiAddress = process.env.TRAMMEL_API ?? 'http://127.0.0.1:4180';
 
@@ -11,7 +12,7 @@ const node = (name: string, root: string) => ({
 
 export default defineConfig({
   publicDir: 'apps/portal/public',
-  plugins: [react(), tailwindcss()],
+  plugins: [react(), tailwindcss(), pdfResources()],
   build: { outDir: 'dist/portal', emptyOutDir: true, target: 'es2022', assetsInlineLimit: 0, manifest: true },
   server: { port: 4181, strictPort: false, proxy: { '/api': { target: apiAddress } } },
   test: {

@@ -59,6 +59,42 @@ export const routeTable: readonly PortalRoute[] = [
     needs: 'submission:read',
     lazy: () => import('./routes/packages/warrant.tsx'),
   },
+  {
+    path: '/submissions/:submissionId/review',
+    needs: 'submission:read',
+    wide: true,
+    lazy: () => import('./routes/packages/review.tsx'),
+  },
+  {
+    path: '/submissions/:submissionId/disposition',
+    needs: 'submission:read',
+    lazy: () => import('./routes/packages/disposition.tsx'),
+  },
+  { path: '/buying-status', needs: 'buying:read', lazy: () => import('./routes/buying-status.tsx') },
+  { path: '/buying-status/:lineId', needs: 'buying:read', lazy: () => import('./routes/buying-line.tsx') },
+  { path: '/parts', needs: 'part:read', lazy: () => import('./routes/parts/parts.tsx') },
+  { path: '/parts/:partId', needs: 'part:read', lazy: () => import('./routes/parts/part.tsx') },
+  {
+    path: '/parts/:partId/revisions/:revisionId',
+    needs: ['part:read', 'request:read'],
+    lazy: () => import('./routes/parts/revision.tsx'),
+    wide: true,
+  },
+  {
+    path: '/parts/:partId/revisions/:revisionId/import',
+    needs: 'part:write',
+    lazy: () => import('./routes/parts/import.tsx'),
+  },
+  {
+    path: '/parts/:partId/revisions/:revisionId/comparison',
+    needs: 'part:read',
+    lazy: () => import('./routes/parts/comparison.tsx'),
+  },
+  {
+    path: '/submissions/:submissionId/import',
+    needs: 'measurement:write',
+    lazy: () => import('./routes/packages/import.tsx'),
+  },
   { path: '/gauges', needs: 'gauge:write', lazy: () => import('./routes/gauges.tsx') },
   { path: '/people', needs: 'people:manage', lazy: () => import('./routes/people.tsx') },
   {

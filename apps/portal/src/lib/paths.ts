@@ -9,6 +9,7 @@ export const paths = {
   worklist: '/worklist',
   reviewDesk: '/review-desk',
   buyingStatus: '/buying-status',
+  buyingLine: (id: string) => `/buying-status/${id}`,
   people: '/people',
   suppliers: '/suppliers',
   audit: '/audit',

@@ -27,4 +27,6 @@ export const packageTabs: readonly PackageTab[] = [
   },
   { label: 'Deviations', path: paths.deviations, shows: hasEvidence },
   { label: 'Warrant', path: paths.warrant, shows: hasEvidence },
+  { label: 'Review', path: paths.review, shows: (submission) => submission.submittedAt !== null },
+  { label: 'Disposition', path: paths.disposition, shows: (submission) => submission.submittedAt !== null },
 ];
