@@ -3,6 +3,7 @@ import { d2, d3 } from '../control-charts/constants.ts';
 import { tUpperQuantile, tUpperTail } from '../distributions/student-t.ts';
 import { undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
+import { isUsableReading } from './usable-reading.ts';
 import { d2Star } from './average-range-study.ts';
 
 export interface BiasOptions {
@@ -57,7 +58,7 @@ export function biasStudy(
 ): BiasStudy | Undetermined {
   const n = values.length;
   if (n < 2) return undetermined('too-few', 'A bias study needs two or more readings');
-  if (![...values, reference].every(Number.isFinite))
+  if (![...values, reference].every(isUsableReading))
     return undetermined('not-finite', 'A reading or the reference is not a number');
   const alpha = options.alpha ?? 0.05;
   if (!(alpha > 0 && alpha < 1)) return undetermined('alpha', 'Alpha must lie between 0 and 1');

@@ -1,5 +1,6 @@
 import { undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
+import { isUsableReading } from './usable-reading.ts';
 
 /** Readings of a crossed gauge study: `readings[part][appraiser][trial]`, every cell with the same number of trials. */
 export type CrossedReadings = readonly (readonly (readonly number[])[])[];
@@ -76,7 +77,7 @@ export function sizeOfCrossed(readings: CrossedReadings): StudySize | Undetermin
       );
     }
     for (const cell of row) {
-      if (!cell.every(Number.isFinite))
+      if (!cell.every(isUsableReading))
         return undetermined('not-finite', `Part ${part + 1} has a reading that is not a number`);
     }
   }

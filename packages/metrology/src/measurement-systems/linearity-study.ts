@@ -1,6 +1,7 @@
 import { tUpperQuantile, tUpperTail } from '../distributions/student-t.ts';
 import { undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
+import { isUsableReading } from './usable-reading.ts';
 
 /** Repeated readings of one part whose true size is known. */
 export interface ReferencePart {
@@ -52,7 +53,7 @@ export function linearityStudy(parts: readonly ReferencePart[], alpha = 0.05): L
     part.values.map((value) => ({ x: part.reference, y: value - part.reference })),
   );
   const n = points.length;
-  if (!points.every(({ x, y }) => Number.isFinite(x) && Number.isFinite(y))) {
+  if (!points.every(({ x, y }) => isUsableReading(x) && isUsableReading(y))) {
     return undetermined('not-finite', 'A reading or a reference is not a number');
   }
   if (!(alpha > 0 && alpha < 1)) return undetermined('alpha', 'Alpha must lie between 0 and 1');

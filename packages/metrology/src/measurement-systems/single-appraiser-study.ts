@@ -1,6 +1,7 @@
 import { d2 } from '../control-charts/constants.ts';
 import { undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
+import { isUsableReading } from './usable-reading.ts';
 import type { GaugeTolerance } from './variance-shares.ts';
 
 export interface SingleAppraiserStudy {
@@ -38,7 +39,7 @@ export function singleAppraiserStudy(
   if (readings.some((row) => row.length !== trials))
     return undetermined('unbalanced', `Every part needs ${trials} readings`);
   const all = readings.flat();
-  if (!all.every(Number.isFinite)) return undetermined('not-finite', 'A reading is not a number');
+  if (!all.every(isUsableReading)) return undetermined('not-finite', 'A reading is not a number');
   const factor = d2(trials);
   const multiplier = options.multiplier ?? 6;
   const origin = all[0] ?? 0;

@@ -2,6 +2,7 @@ import { chartConstants } from '../control-charts/constants.ts';
 import { tUpperTail } from '../distributions/student-t.ts';
 import { undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
+import { isUsableReading } from './usable-reading.ts';
 
 export interface StabilityPoint {
   /** occasion, counted from 1 */
@@ -57,7 +58,7 @@ export function stabilityStudy(
   if (occasions.some((readings) => readings.length !== size)) {
     return undetermined('unbalanced', 'Every occasion needs the same number of readings');
   }
-  if (!occasions.flat().every(Number.isFinite))
+  if (!occasions.flat().every(isUsableReading))
     return undetermined('not-finite', 'A reading is not a number');
   const means = occasions.map(meanOf);
   const deviations = occasions.map((readings, place) =>
