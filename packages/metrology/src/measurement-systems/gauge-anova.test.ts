@@ -162,7 +162,7 @@ describe('laws and edges', () => {
           );
         },
       ),
-      { numRuns: 200 },
+      { numRuns: 60 },
     );
   });
 
