@@ -5,6 +5,7 @@ import published from '../testing/reference/const-published-table.json';
 import { relativeError } from '../testing/relative-error.ts';
 import { isUndetermined } from '../result.ts';
 import { chartConstants } from './constants.ts';
+import { c4, d2, d3 } from './single-constants.ts';
 import type { ChartConstants } from './constants.ts';
 
 function constantsOf(n: number): ChartConstants {
@@ -62,6 +63,14 @@ describe('chart constants', () => {
     [1.88, 1.187, 0.796, 0.691, 0.548, 0.508].forEach((factor, index) =>
       expect(Math.abs(constantsOf(index + 2).A6 - factor)).toBeLessThan(0.0011),
     );
+  });
+
+  it('gives single constants beyond 25, and a reason where there is none', () => {
+    // d2(100) = 5.015 and c4(100) = 0.997478 to the digits of common tables (from memory); d3 falls slowly.
+    expect(Math.abs((d2(100) as number) - 5.015)).toBeLessThan(0.0005);
+    expect(c4(100)).toBeCloseTo(0.997478, 6);
+    expect(d3(100)).toBeCloseTo(0.605, 3);
+    for (const f of [d2, d3, c4]) expect(f(1)).toMatchObject({ code: 'outside-domain' });
   });
 
   it('refuses subgroups outside 2 to 25', () => {

@@ -1,7 +1,8 @@
 export { attributeChart } from './attribute-chart.ts';
 export type { AttributeChart, AttributeChartInput, AttributeChartKind } from './attribute-chart.ts';
-export { c4, chartConstants, d2, d3 } from './constants.ts';
+export { chartConstants } from './constants.ts';
 export type { ChartConstants } from './constants.ts';
+export { c4, d2, d3 } from './single-constants.ts';
 export { falseAlarmRate, WINDOW_PROBABILITY } from './false-alarms.ts';
 export type { FalseAlarmRate } from './false-alarms.ts';
 export { individualsChart } from './individuals-chart.ts';

@@ -4,6 +4,8 @@ import { readExactly } from '../statistics/readings.ts';
 import type { Reading } from '../statistics/readings.ts';
 import { summarize } from '../statistics/summarize.ts';
 import { d2, d3 } from './constants.ts';
+import { falseAlarmRate } from './false-alarms.ts';
+import type { FalseAlarmRate } from './false-alarms.ts';
 import { controlLimits } from './limits.ts';
 import { describePhase, pointsOfPhase } from './phase.ts';
 import type { Phase } from './phase.ts';
@@ -37,6 +39,8 @@ export interface IndividualsChart {
   readonly individuals: ChartSeries;
   readonly movingRanges: ChartSeries;
   readonly verdict: ProcessVerdict;
+  /** How often the rules on the chart of readings signal by chance alone, its points taken as normal. */
+  readonly falseAlarms: FalseAlarmRate | Undetermined;
 }
 
 /** |x(i) − x(i−1)| exactly from the decimals, so that equal steps give equal ranges. */
@@ -104,5 +108,6 @@ export function individualsChart(input: IndividualsChartInput): IndividualsChart
     individuals,
     movingRanges: ranges,
     verdict: judgeProcess([individuals, ranges]),
+    falseAlarms: falseAlarmRate(individuals.rules),
   };
 }

@@ -83,6 +83,8 @@ it('describes each piston ring subgroup, its overall deviation and the printed f
     published.tolerance_abs,
   );
   expect(result.verdict.state).toBe('in-control');
+  expect(result.falseAlarms).toMatchObject({ rules: result.location.rules });
+  near(known(result.falseAlarms).averageRunLength, 91.75077312835, 1e-11);
 });
 
 describe('limits from a phase', () => {

@@ -2,6 +2,8 @@ import { isUndetermined, undetermined } from '../result.ts';
 import type { Undetermined } from '../result.ts';
 import type { Reading } from '../statistics/readings.ts';
 import { c4, d2, d3 } from './constants.ts';
+import { falseAlarmRate } from './false-alarms.ts';
+import type { FalseAlarmRate } from './false-alarms.ts';
 import { controlLimits } from './limits.ts';
 import type { ChartPoint } from './limits.ts';
 import { medianDeviation } from './median-deviation.ts';
@@ -55,6 +57,8 @@ export interface SubgroupChart {
   readonly location: ChartSeries;
   readonly spread: ChartSeries;
   readonly verdict: ProcessVerdict;
+  /** How often the rules on the chart of location signal by chance alone, its points taken as normal. */
+  readonly falseAlarms: FalseAlarmRate | Undetermined;
 }
 
 const mean = (values: readonly number[]) => values.reduce((sum, value) => sum + value, 0) / values.length;
@@ -167,5 +171,6 @@ export function subgroupChart(input: SubgroupChartInput): SubgroupChart | Undete
     location,
     spread,
     verdict: judgeProcess([location, spread]),
+    falseAlarms: falseAlarmRate(location.rules),
   };
 }
