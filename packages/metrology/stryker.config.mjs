@@ -18,11 +18,11 @@ export default {
     '!src/**/index.ts',
   ],
   // Outside the package, so that a test run beside it never meets the changed copies.
-  tempDirName: '../../dist/mutation',
+  tempDirName: process.env.MUTATION_FOLDER ?? '../../dist/mutation',
   concurrency: Number(process.env.MUTATION_WORKERS ?? 2),
   timeoutMS: 20_000,
   reporters: ['clear-text', 'progress-append-only', 'json'],
-  jsonReporter: { fileName: 'reports/mutation.json' },
+  jsonReporter: { fileName: process.env.MUTATION_REPORT ?? 'reports/mutation.json' },
   clearTextReporter: { allowColor: false, logTests: false, reportTests: false },
   thresholds: { high: 95, low: 90, break: 90 },
 };

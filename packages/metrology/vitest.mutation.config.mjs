@@ -6,7 +6,7 @@ export default defineConfig({
     environment: 'node',
     isolate: false,
     include: [
-      `src/${process.env.MUTATION_ROOM ?? '{decimal,conformance,control-charts,capability}'}/**/*.test.ts`,
+      `src/${process.env.MUTATION_TESTS ?? '{decimal,conformance,control-charts,capability}/**/*'}.test.ts`,
     ],
     exclude: ['src/conformance/exactness.test.ts'],
   },

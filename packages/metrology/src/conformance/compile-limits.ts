@@ -1,10 +1,4 @@
-import {
-  addDecimals,
-  compareDecimals,
-  digitsAtScale,
-  powerOfTen,
-  subtractDecimals,
-} from '../decimal/decimal.ts';
+import { addDecimals, compareDecimals, powerOfTen, subtractDecimals } from '../decimal/decimal.ts';
 import type { Decimal } from '../decimal/decimal.ts';
 import { MAXIMUM_DIGITS, parseDecimal } from '../decimal/parse-decimal.ts';
 import { divideRounded } from '../decimal/round-decimal.ts';
@@ -79,22 +73,15 @@ export interface CompiledLimits {
   readonly scaled: (ScaledBounds | undefined)[];
 }
 
+/** The outermost whole number of 10^(−scale) that a bound still lets in. */
 function scaledBound(bound: Bound | null, scale: number, side: 'low' | 'high'): number {
   if (bound === null) return side === 'low' ? -Infinity : Infinity;
-  const { value, inclusive } = bound;
-  const step = side === 'low' ? 1n : -1n;
-  let threshold: bigint;
-  if (scale >= value.scale) {
-    threshold = digitsAtScale(value, scale);
-    if (!inclusive) threshold += step;
-  } else {
-    const divisor = powerOfTen(value.scale - scale);
-    threshold = divideRounded(value.digits, divisor, side === 'low' ? 'ceiling' : 'floor');
-    if (!inclusive && threshold * divisor === value.digits) threshold += step;
-  }
-  if (threshold > BigInt(Number.MAX_SAFE_INTEGER)) return Infinity;
-  if (threshold < -BigInt(Number.MAX_SAFE_INTEGER)) return -Infinity;
-  return Number(threshold);
+  const numerator = bound.value.digits * powerOfTen(scale);
+  const denominator = powerOfTen(bound.value.scale);
+  const threshold = divideRounded(numerator, denominator, side === 'low' ? 'ceiling' : 'floor');
+  const onBound = threshold * denominator === numerator;
+  if (bound.inclusive || !onBound) return Number(threshold);
+  return Number(side === 'low' ? threshold + 1n : threshold - 1n);
 }
 
 /** The integer bounds for readings with `scale` decimals, 0 to 15. */
@@ -121,10 +108,11 @@ const inclusive = (value: Decimal | null): Bound | null =>
 function roundingBound(limit: Decimal | null, places: number, side: 'low' | 'high'): Bound | null {
   if (limit === null) return null;
   const up = side === 'high';
-  const unit =
-    places >= limit.scale
-      ? digitsAtScale(limit, places)
-      : divideRounded(limit.digits, powerOfTen(limit.scale - places), up ? 'floor' : 'ceiling');
+  const unit = divideRounded(
+    limit.digits * powerOfTen(places),
+    powerOfTen(limit.scale),
+    up ? 'floor' : 'ceiling',
+  );
   const value = { digits: unit * 10n + (up ? 5n : -5n), scale: places + 1 };
   return { value, inclusive: unit % 2n === 0n };
 }
@@ -137,10 +125,8 @@ function shiftedZone(limits: ReadLimits, margin: Decimal): Zone {
   };
 }
 
-function isEmpty(zone: Zone): boolean {
-  if (zone.low === null || zone.high === null) return false;
-  const order = compareDecimals(zone.low.value, zone.high.value);
-  return order > 0 || (order === 0 && !(zone.low.inclusive && zone.high.inclusive));
+function isEmpty({ low, high }: Zone): boolean {
+  return low !== null && high !== null && compareDecimals(low.value, high.value) > 0;
 }
 
 function zonesOf(limits: ReadLimits, rule: DecisionRule, places: number | null): [Zone, Zone] | Undetermined {

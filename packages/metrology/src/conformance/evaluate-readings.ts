@@ -86,10 +86,9 @@ export function evaluateCompiled(
     if (plain) {
       let at = 0;
       let point = -1;
-      const first = text.charCodeAt(0);
-      if (first === 0x2d || first === 0x2b) {
+      if (text.charCodeAt(0) === 0x2d) {
         at = 1;
-        negative = first === 0x2d;
+        negative = true;
       }
       let figures = length - at;
       for (; at < length; at += 1) {
