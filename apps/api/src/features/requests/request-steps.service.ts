@@ -1,4 +1,5 @@
 import type { RequestResponse } from '@trammel/shared/requests';
+import type { EntityManager } from 'typeorm';
 import { appendAudit } from '../../database/append-audit.ts';
 import { ApprovalRequest } from '../../database/entities/request.entity.ts';
 import { SupplyLine } from '../../database/entities/supply-line.entity.ts';
@@ -20,7 +21,7 @@ import { mayWithdraw } from './requests.rules.ts';
 
 /** The supplier takes the request on: from here the package can be filled. */
 export function acknowledgeRequest(deed: Deed, requestId: string): Promise<RequestResponse> {
-  return changeEvidence(deed, async (manager) => {
+  return changeEvidence(deed, async (manager: EntityManager) => {
     const { actor, now } = deed;
     const { request, side } = await findRequestForActor(manager, actor, requestId);
     if (side !== 'supplier') throw new Forbidden('Only the supplier acknowledges a request.');

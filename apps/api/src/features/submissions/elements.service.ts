@@ -21,7 +21,7 @@ export function changeElement(
   version: number,
   change: Required<ChangeElementRequest>,
 ): Promise<ElementResponse> {
-  return changeEvidence(deed, async (manager) => {
+  return changeEvidence(deed, async (manager: EntityManager) => {
     const found = await findSubmissionOfElement(manager, deed.actor, elementId);
     const submission = requireOpenForSupplier(found);
     const before = await findElement(manager, elementId, found.side);
@@ -47,7 +47,7 @@ export function changeElement(
 
 /** Hangs an uploaded file on an element. Only a file of one's own organisation can be claimed. */
 export function attachFile(deed: Deed, elementId: string, fileId: string): Promise<ElementResponse> {
-  return changeEvidence(deed, async (manager) => {
+  return changeEvidence(deed, async (manager: EntityManager) => {
     const found = await findSubmissionOfElement(manager, deed.actor, elementId);
     const submission = requireOpenForSupplier(found);
     const element = await findElement(manager, elementId, found.side);
@@ -88,7 +88,7 @@ export function attachFile(deed: Deed, elementId: string, fileId: string): Promi
 
 /** Takes a file off an element. The stored file itself stays, for rounds it was submitted with. */
 export function detachFile(deed: Deed, elementId: string, fileId: string): Promise<ElementResponse> {
-  return changeEvidence(deed, async (manager) => {
+  return changeEvidence(deed, async (manager: EntityManager) => {
     const found = await findSubmissionOfElement(manager, deed.actor, elementId);
     const submission = requireOpenForSupplier(found);
     const element = await findElement(manager, elementId, found.side);

@@ -49,7 +49,7 @@ export function blockStream(
   version: number,
   change: { blocked: boolean; reason: string },
 ): Promise<StreamResponse> {
-  return changeEvidence(deed, async (manager) => {
+  return changeEvidence(deed, async (manager: EntityManager) => {
     const found = await findSubmissionForActor(manager, deed.actor, submissionId);
     const submission = requireOpenForSupplier(found);
     const streams = await findStreams(manager, submissionId);
@@ -90,7 +90,7 @@ export function addPieces(
   submissionId: string,
   pieces: readonly PieceFields[],
 ): Promise<SubmissionPiecesResponse> {
-  return changeEvidence(deed, async (manager) => {
+  return changeEvidence(deed, async (manager: EntityManager) => {
     const found = await findSubmissionForActor(manager, deed.actor, submissionId);
     const submission = requireOpenForSupplier(found);
     const streams = await findStreams(manager, submissionId);
@@ -144,7 +144,7 @@ export function changePiece(
   version: number,
   change: PieceFields,
 ): Promise<PieceResponse> {
-  return changeEvidence(deed, async (manager) => {
+  return changeEvidence(deed, async (manager: EntityManager) => {
     const found = await findSubmissionOfPiece(manager, deed.actor, pieceId);
     const submission = requireOpenForSupplier(found);
     const before = await findPiece(manager, pieceId);
@@ -177,7 +177,7 @@ export function changePiece(
 
 /** Removes a piece with its readings, which are asked about first, and judges the rows of its stream again. */
 export function removePiece(deed: Deed, pieceId: string, confirmed: boolean): Promise<void> {
-  return changeEvidence(deed, async (manager) => {
+  return changeEvidence(deed, async (manager: EntityManager) => {
     const found = await findSubmissionOfPiece(manager, deed.actor, pieceId);
     const submission = requireOpenForSupplier(found);
     const piece = await manager.findOneByOrFail(SamplePiece, { id: pieceId });

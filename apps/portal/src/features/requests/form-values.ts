@@ -73,6 +73,24 @@ export function bodyOf({ partId: _partId, streams, piecesPerStream, ...values }:
   };
 }
 
+const inFormOrder = [
+  'revisionId',
+  'supplierId',
+  'siteId',
+  'reason',
+  'reasonNote',
+  'level',
+  'elements',
+  'streamKind',
+  'streams',
+  'piecesPerStream',
+  'decisionRule',
+  'dueOn',
+  'purchaseOrder',
+  'reviewerIds',
+  'message',
+];
+
 const fieldWords: Record<string, string> = {
   revisionId: 'Choose a part and its revision.',
   supplierId: 'Choose a supplier.',
@@ -90,5 +108,8 @@ export function refusalsOf(
     const deep = field === 'decisionRule' || field === 'elements' ? issue.path.join('.') : field;
     return { field: deep, message: fieldWords[field] ?? issue.message };
   });
-  return found.filter((one, index) => found.findIndex((other) => other.field === one.field) === index);
+  const place = (field: string) => inFormOrder.indexOf(field.split('.')[0] ?? '');
+  return found
+    .filter((one, index) => found.findIndex((other) => other.field === one.field) === index)
+    .sort((a, b) => place(a.field) - place(b.field));
 }

@@ -35,11 +35,13 @@ function forSupplier(submission: SubmissionResponse): NextStep {
         return {
           title: `${countOf(findings.stops, 'finding stops', 'findings stop')} submission`,
           text: 'Each finding says where it is and what mends it.',
+          link: { to: paths.check(submission.id), label: 'Open the findings' },
         };
       }
       return {
         title: 'Nothing stops submission',
         text: 'A person with the authority to sign reads the warrant and signs; signing submits the package.',
+        link: { to: paths.warrant(submission.id), label: 'Open the warrant' },
       };
     case 'submitted':
     case 'in-review':
@@ -82,6 +84,7 @@ function forCustomer(submission: SubmissionResponse): NextStep {
       return {
         title: abilities.review ? 'Waits for your review' : 'Waits for review',
         text: `${counts.marked} of ${countOf(counts.characteristics, 'characteristic is', 'characteristics are')} marked. Failing, undecided and special rows come first.`,
+        ...(abilities.review && { link: { to: paths.review(submission.id), label: 'Open the review' } }),
       };
     case 'sent-back':
     case 'rejected':

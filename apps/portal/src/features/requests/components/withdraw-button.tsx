@@ -10,6 +10,7 @@ export function WithdrawButton({ request }: { request: RequestResponse }) {
   const client = useQueryClient();
   const [open, setOpen] = useState(false);
   const [reason, setReason] = useState('');
+  const [missing, setMissing] = useState<string>();
   if (!request.abilities.withdraw) return null;
   const draft = request.state === 'draft';
   return (
@@ -27,6 +28,11 @@ export function WithdrawButton({ request }: { request: RequestResponse }) {
         confirmLabel={draft ? 'Drop the draft' : 'Withdraw the request'}
         danger
         onConfirm={async () => {
+          if (reason.trim() === '') {
+            const refusal = 'Say why; the reason stays with the request.';
+            setMissing(refusal);
+            throw new Error(refusal);
+          }
           const latest = client.getQueryData(requestQuery(request.id).queryKey) ?? request;
           const withdrawn = await withdrawRequest(latest, reason);
           client.setQueryData(requestQuery(request.id).queryKey, withdrawn);
@@ -34,7 +40,16 @@ export function WithdrawButton({ request }: { request: RequestResponse }) {
           await client.invalidateQueries({ queryKey: ['submission'] });
         }}
       >
-        <TextArea id="withdraw-reason" label="Reason" value={reason} onChange={setReason} />
+        <TextArea
+          id="withdraw-reason"
+          label="Reason"
+          error={missing}
+          value={reason}
+          onChange={(text) => {
+            setReason(text);
+            setMissing(undefined);
+          }}
+        />
       </ConfirmDialog>
     </>
   );

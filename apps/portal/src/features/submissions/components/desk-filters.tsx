@@ -3,6 +3,7 @@ import { packageStates, type PackageState } from '@trammel/shared/status';
 import { SelectField } from '../../../components/ui/select-field.tsx';
 import { packageStateWords } from '../../../components/ui/state-badge.tsx';
 import { TextField } from '../../../components/ui/text-field.tsx';
+import { useKeys } from '../../../lib/use-keys.ts';
 
 export interface DeskFiltersProps {
   q: string;
@@ -30,6 +31,12 @@ export function DeskFilters({ q, state, show, shows, searchHint, onChange }: Des
     const timer = setTimeout(() => onChange({ q: typed }), quiet);
     return () => clearTimeout(timer);
   }, [typed, q, onChange]);
+
+  useKeys('Desk', [
+    { keys: '/', label: 'Search', run: () => document.getElementById('desk-search')?.focus() },
+    { keys: 'ArrowDown', label: 'Next package, once one has the focus' },
+    { keys: 'Enter', label: 'Open the package' },
+  ]);
 
   return (
     <search className="no-print mb-3 flex flex-wrap items-end gap-3">

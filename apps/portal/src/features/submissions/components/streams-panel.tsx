@@ -66,6 +66,7 @@ function StreamDialog({
 }) {
   const client = useQueryClient();
   const [reason, setReason] = useState('');
+  const [missing, setMissing] = useState<string>();
   const blocks = !stream.blocked;
   return (
     <ConfirmDialog
@@ -80,6 +81,11 @@ function StreamDialog({
       confirmLabel={blocks ? `Block ${stream.name}` : `Take ${stream.name} back in`}
       danger={blocks}
       onConfirm={async () => {
+        if (blocks && reason.trim() === '') {
+          const refusal = `Say why ${stream.name} is blocked.`;
+          setMissing(refusal);
+          throw new Error(refusal);
+        }
         await blockStream(submission.id, stream, { blocked: blocks, reason: blocks ? reason : '' });
         await client.invalidateQueries({ queryKey: submissionKey(submission.id) });
       }}
@@ -89,8 +95,12 @@ function StreamDialog({
           id="block-reason"
           label="Reason"
           hint="The customer reads it on the warrant."
+          error={missing}
           value={reason}
-          onChange={setReason}
+          onChange={(text) => {
+            setReason(text);
+            setMissing(undefined);
+          }}
         />
       )}
     </ConfirmDialog>
