@@ -87,7 +87,8 @@ export function factsOfRow(raw: unknown): CharacteristicFacts {
     unit: row.unit,
     decimals: row.decimals,
     nominal: row.nominal,
-    lowerLimit: row.lower_limit,
+    // A bound set by nature is kept apart from the tolerance limits in everything that judges.
+    lowerLimit: row.natural_lower === 1 ? null : row.lower_limit,
     upperLimit: row.upper_limit,
     naturalLower: row.natural_lower === 1,
     geometric: row.geometric === null ? null : (JSON.parse(row.geometric) as GeometricSpec | null),

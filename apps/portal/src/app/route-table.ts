@@ -70,7 +70,12 @@ export const routeTable: readonly PortalRoute[] = [
     needs: 'submission:read',
     lazy: () => import('./routes/packages/disposition.tsx'),
   },
-  { path: '/buying-status', needs: 'buying:read', lazy: () => import('./routes/buying-status.tsx') },
+  {
+    path: '/buying-status',
+    needs: 'buying:read',
+    wide: true,
+    lazy: () => import('./routes/buying-status.tsx'),
+  },
   { path: '/buying-status/:lineId', needs: 'buying:read', lazy: () => import('./routes/buying-line.tsx') },
   { path: '/parts', needs: 'part:read', lazy: () => import('./routes/parts/parts.tsx') },
   { path: '/parts/:partId', needs: 'part:read', lazy: () => import('./routes/parts/part.tsx') },

@@ -20,49 +20,39 @@ import { buyingStatusQuery } from '../api.ts';
 const columns: DataColumn<BuyingStatusItem>[] = [
   {
     id: 'part',
-    header: 'Part',
+    header: 'Verdict and part',
     sort: true,
     sortName: 'partNumber',
-    cell: (line) => <span className="figures">{line.partNumber}</span>,
-  },
-  { id: 'verdict', header: 'Verdict', cell: (line) => <BuyingVerdictBadge verdict={line.verdict} /> },
-  { id: 'name', header: 'Name', cell: (line) => line.partName, wrap: true, from: 'md' },
-  {
-    id: 'supplier',
-    header: 'Supplier',
-    sort: true,
-    sortName: 'supplier',
-    cell: (line) => line.supplierName,
-    wrap: true,
-  },
-  {
-    id: 'revision',
-    header: 'Revision',
     cell: (line) => (
-      <span className="figures">
-        {line.approvedRevision ?? 'none'}
-        {line.currentRevision !== null && line.currentRevision !== line.approvedRevision && (
-          <span className="text-plum"> (drawing {line.currentRevision})</span>
-        )}
+      <span className="inline-flex flex-wrap items-center gap-x-2">
+        <BuyingVerdictBadge verdict={line.verdict} />
+        <span className="figures">{line.partNumber}</span>
       </span>
     ),
   },
+  { id: 'name', header: 'Name', cell: (line) => line.partName, wrap: true, from: 'md' },
+  { id: 'supplier', header: 'Supplier', sort: true, cell: (line) => line.supplierName, wrap: true },
+  { id: 'revision', header: 'Revision', cell: (line) => <Revision line={line} /> },
   {
     id: 'left',
     header: 'Pieces left',
     align: 'end',
-    cell: (line) =>
-      line.piecesLeft === null ? (line.verdict === 'may-buy' ? 'no limit' : '–') : showCount(line.piecesLeft),
+    cell: (line) => <span className="figures">{piecesLeft(line)}</span>,
   },
   {
     id: 'until',
     header: 'Until',
     sort: true,
-    sortName: 'until',
     cell: (line) => (line.until === null ? '–' : <Day on={line.until} />),
   },
-  { id: 'blocker', header: 'What stands in the way', cell: (line) => line.blocker ?? 'nothing', wrap: true },
-  { id: 'holder', header: 'In whose hands', cell: (line) => line.holder ?? '–', from: 'md' },
+  {
+    id: 'blocker',
+    header: 'What stands in the way',
+    cell: (line) => line.blocker ?? 'nothing',
+    wrap: true,
+    width: 'min-w-64',
+  },
+  { id: 'holder', header: 'In whose hands', cell: (line) => line.holder ?? '–', wrap: true, from: 'md' },
   {
     id: 'due',
     header: 'Due',
@@ -82,9 +72,24 @@ const columns: DataColumn<BuyingStatusItem>[] = [
     id: 'tooling',
     header: 'Tooling release',
     cell: (line) => (line.toolingRelease ? 'yes' : 'no'),
-    from: 'lg',
+    from: 'xl',
   },
 ];
+
+function piecesLeft(line: BuyingStatusItem): string {
+  if (line.verdict === 'hold') return '–';
+  return line.piecesLeft === null ? 'no limit' : showCount(line.piecesLeft);
+}
+
+function Revision({ line }: { line: BuyingStatusItem }) {
+  const newer = line.currentRevision !== null && line.currentRevision !== line.approvedRevision;
+  return (
+    <span className="figures">
+      {line.approvedRevision ?? 'none'}
+      {newer && <span className="text-plum"> (drawing {line.currentRevision})</span>}
+    </span>
+  );
+}
 
 /** One row a part and supplier, the verdict first; derived by the server from decisions and the clock. */
 export function BuyingStatusList() {
