@@ -27,6 +27,7 @@ describe('the next step of a supplier', () => {
     ['a package sent back', { state: 'sent-back' }, 'Complete what was sent back in round 2'],
     ['a rejected package', { state: 'rejected', round: 2 }, 'Remove the causes and start round 3'],
     ['an interim approval', { state: 'interim-approval' }, 'Work off the conditions and start round 2'],
+    ['one that ran out', { state: 'lapsed' }, 'Start round 2: the interim approval has run out'],
   ] satisfies [string, Partial<StepFacts>, string][])('for %s is said in words', (_name, facts, words) => {
     expect(nextStep({ ...working, ...facts })).toBe(words);
   });

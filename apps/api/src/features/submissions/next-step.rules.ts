@@ -26,6 +26,8 @@ export function nextStep(facts: StepFacts): string | null {
       return `Remove the causes and start round ${facts.round + 1}`;
     case 'interim-approval':
       return `Work off the conditions and start round ${facts.round + 1}`;
+    case 'lapsed':
+      return `Start round ${facts.round + 1}: the interim approval has run out`;
     default:
       return null;
   }

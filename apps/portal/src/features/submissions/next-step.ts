@@ -60,6 +60,11 @@ function forSupplier(submission: SubmissionResponse): NextStep {
         title: 'Approved for a time',
         text: 'Work off the conditions and start the next round before the end date.',
       };
+    case 'lapsed':
+      return {
+        title: 'The interim approval has run out',
+        text: 'Nothing may be bought on it any more. Start the next round to bring the part back.',
+      };
     default:
       return settled(submission);
   }
@@ -111,7 +116,10 @@ function settled(submission: SubmissionResponse): NextStep {
         text: 'The customer called the request off. What was entered stays readable.',
       };
     case 'lapsed':
-      return { title: 'Lapsed', text: 'The approval has run out. A new request brings the part back.' };
+      return {
+        title: 'The interim approval has run out',
+        text: 'Purchasing reads hold. The supplier starts the next round, or a new request brings the part back.',
+      };
     default:
       return { title: 'Superseded', text: 'A newer package took the place of this one.' };
   }

@@ -31,7 +31,7 @@ export function StreamsPanel({ submission, streams, editable }: StreamsPanelProp
             className="flex min-h-row flex-wrap items-center gap-x-4 gap-y-1 border-rule px-3 py-1 not-first:border-t"
           >
             <span className="basis-40 font-medium">{stream.name}</span>
-            <span className="min-w-0 flex-1 break-words">
+            <span className="min-w-0 flex-1 basis-48 break-words">
               {stream.blocked ? (
                 <span className="text-vermilion">blocked: {stream.blockedReason}</span>
               ) : (

@@ -15,7 +15,8 @@ import { worklistQuery } from '../api.ts';
 import { DeskFilters } from './desk-filters.tsx';
 import { FindingTally } from './finding-tally.tsx';
 
-const settled = ['approved', 'withdrawn', 'superseded', 'lapsed', 'submitted', 'in-review'];
+/** The due date is that of handing in: it presses until the supplier has, and again when the package came back. */
+const pressing = ['requested', 'in-preparation', 'sent-back', 'rejected'];
 
 const columns: DataColumn<WorklistItem>[] = [
   {
@@ -57,7 +58,7 @@ const columns: DataColumn<WorklistItem>[] = [
     id: 'dueOn',
     header: 'Due',
     sort: true,
-    cell: (row) => <DueDay on={row.dueOn} settled={settled.includes(row.state)} />,
+    cell: (row) => <DueDay on={row.dueOn} settled={!pressing.includes(row.state)} />,
   },
   {
     id: 'state',
