@@ -32,6 +32,29 @@ describe('the combined verdict', () => {
     );
   });
 
+  it('decides exact ties towards the better word, and leaves a process alone that just has the room', () => {
+    expect(sure(relateSpreadToBand({ low: -10, centre: 0, high: 11 }, band)).word).toBe(
+      'wider-than-the-band',
+    );
+    expect(sure(relateSpreadToBand({ low: -6.5, centre: 1, high: 8.5 }, band, 20 / 15)).word).toBe(
+      'inside-off-centre',
+    );
+    const justRoom = sure(relateSpreadToBand({ low: -5, centre: 1, high: 7 }, band, 1.5));
+    expect(justRoom).toMatchObject({ word: 'inside-with-room', mend: { recentreBy: 0, advice: 'nothing' } });
+    expect(
+      sure(relateSpreadToBand({ low: 7, centre: 10, high: 13 }, band)).mend.reduceSpreadBy,
+    ).toMatchObject({ code: 'centre-outside' });
+  });
+
+  it('carries what it was asked', () => {
+    const spread = normalSpread(1, 2);
+    expect(sure(relateSpreadToBand(spread, band, 1.5)).inputs).toEqual({
+      spread,
+      limits: band,
+      wantedIndex: 1.5,
+    });
+  });
+
   it('says what would mend it', () => {
     expect(at(0, 2).mend).toMatchObject({ recentreBy: 0, reduceSpreadBy: 0, advice: 'nothing' });
     const offCentre = at(2, 2.2);
@@ -76,6 +99,11 @@ describe('one limit', () => {
     expect(one(8).lowerRoom).toMatchObject({ code: 'no-limit' });
     const strength = sure(relateSpreadToBand(normalSpread(402, 1), { lower: 400 }));
     expect(strength.mend.recentreBy).toBeCloseTo(1.99, 12);
+    expect(strength.mend.indexAfterRecentring).toBeCloseTo(1.33, 12);
+    expect(strength.upperRoom).toMatchObject({ reason: 'There is no upper tolerance limit' });
+    expect(one(8).lowerRoom).toMatchObject({ reason: 'There is no lower tolerance limit' });
+    const skewed = sure(relateSpreadToBand({ low: 401, centre: 403, high: 409 }, { lower: 400 }, 2));
+    expect(skewed.mend).toMatchObject({ recentreBy: 1, indexAfterRecentring: 2 });
   });
 
   it('does not push a process past its natural bound', () => {
@@ -141,6 +169,17 @@ describe('laws', () => {
 
   it('refuse a spread without width and a band without limits', () => {
     expect(relateSpreadToBand(normalSpread(0, 0), band)).toMatchObject({ code: 'no-variation' });
+    for (const spread of [
+      { low: 1, centre: 1, high: 2 },
+      { low: 1, centre: 2, high: 2 },
+      { low: 2, centre: 1, high: 3 },
+      { low: 1, centre: 3, high: 2 },
+      { low: -Infinity, centre: 0, high: 1 },
+      { low: 0, centre: 1, high: Infinity },
+      { low: -1.7e308, centre: 0, high: 1.7e308 },
+    ]) {
+      expect(relateSpreadToBand(spread, band)).toMatchObject({ code: 'no-variation' });
+    }
     expect(relateSpreadToBand(normalSpread(0, 1), {})).toMatchObject({ code: 'no-limits' });
     expect(relateSpreadToBand(normalSpread(0, 1), band, 0)).toMatchObject({ code: 'wanted-index' });
   });
