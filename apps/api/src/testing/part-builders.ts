@@ -124,7 +124,7 @@ export function buildIssuedRequest(
       streamKind: 'cavity',
       streams: ['1'],
       piecesPerStream: 3,
-      decisionRule: { rule: 'simple' },
+      decisionRule: { kind: 'simple' },
       dueOn: '2026-04-01',
       createdAt: app.clock.now(),
       createdById: customer.id,

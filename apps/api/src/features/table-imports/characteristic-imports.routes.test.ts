@@ -1,3 +1,4 @@
+import type { Response } from 'supertest';
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { buildCast, type Cast } from '../../testing/builders.ts';
 import { aCharacteristic, buildPart } from '../../testing/part-builders.ts';
@@ -301,8 +302,9 @@ describe('what was exported', () => {
   });
 });
 
-function bytes(res: NodeJS.ReadableStream, done: (error: Error | null, body: Buffer) => void): void {
+function bytes(answer: Response, done: (error: Error | null, body: unknown) => void): void {
   const chunks: Buffer[] = [];
-  res.on('data', (chunk: Buffer) => chunks.push(Buffer.from(chunk)));
-  res.on('end', () => done(null, Buffer.concat(chunks)));
+  const stream = answer as unknown as NodeJS.ReadableStream;
+  stream.on('data', (chunk: Buffer) => chunks.push(Buffer.from(chunk)));
+  stream.on('end', () => done(null, Buffer.concat(chunks)));
 }

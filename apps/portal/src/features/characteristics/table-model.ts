@@ -1,4 +1,11 @@
-import { emptyRow, tableColumns, type RowDetails, type TableColumn, type TableRow } from './table-row.ts';
+import {
+  emptyRow,
+  isBlank,
+  tableColumns,
+  type RowDetails,
+  type TableColumn,
+  type TableRow,
+} from './table-row.ts';
 
 export interface Place {
   readonly row: number;
@@ -206,7 +213,7 @@ export interface Unsaved {
 export function unsavedOf(state: TableState): Unsaved {
   const rows = state.rows.filter((row) => {
     const saved = row.id === null ? undefined : state.saved.get(row.id);
-    return !saved || !sameContent(row, saved);
+    return saved ? !sameContent(row, saved) : !isBlank(row);
   });
   const present = new Set(state.rows.map((row) => row.id));
   const removed = [...state.saved.values()]

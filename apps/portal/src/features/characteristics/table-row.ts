@@ -62,6 +62,14 @@ export function emptyRow(key: string, balloon: string, unit: string): TableRow {
   };
 }
 
+/** A row that was added and not begun: nothing in it asks to be saved or mended. */
+export function isBlank({ id, cells, details }: TableRow): boolean {
+  const begun = tableColumns.some(
+    (column) => !['balloon', 'kind', 'unit'].includes(column) && cells[column] !== '',
+  );
+  return id === null && !begun && details === noDetails;
+}
+
 export function rowOf(item: CharacteristicResponse): TableRow {
   const { nominal, tolerance } = writeTolerance(item.tolerance, item.kind === 'geometric');
   return {

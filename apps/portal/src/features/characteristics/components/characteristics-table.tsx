@@ -19,7 +19,7 @@ import { useKeys } from '../../../lib/use-keys.ts';
 import { restoreTable } from '../restore-table.ts';
 import { commandOf, tableKeys } from '../table-keys.ts';
 import { readBlock, reduceTable, unsavedOf, type Place } from '../table-model.ts';
-import { checkRow, rowOf, tableColumns, type TableRow } from '../table-row.ts';
+import { checkRow, isBlank, rowOf, tableColumns, type TableRow } from '../table-row.ts';
 import { rowHeight, useRowWindow } from '../use-row-window.ts';
 import { useTableSaving } from '../use-table-saving.ts';
 import { CharacteristicDialog } from './characteristic-dialog.tsx';
@@ -44,10 +44,8 @@ export function CharacteristicsTable({ revisionId, items, editable }: Characteri
   const grid = useRef<HTMLDivElement>(null);
   const shown = useRowWindow(grid, table.rows.length);
   const checked = useMemo(() => new Map(table.rows.map((row) => [row.key, checkRow(row)])), [table.rows]);
-  const faultsOf = (row: TableRow) => [
-    ...(checked.get(row.key)?.faults ?? []),
-    ...(saving.refused.get(row.key) ?? []),
-  ];
+  const faultsOf = (row: TableRow) =>
+    isBlank(row) ? [] : [...(checked.get(row.key)?.faults ?? []), ...(saving.refused.get(row.key) ?? [])];
   const faulty = table.rows.flatMap((row, index) => {
     const [fault] = faultsOf(row);
     return fault ? [{ row, index, fault }] : [];

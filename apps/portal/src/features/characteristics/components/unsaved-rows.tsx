@@ -9,7 +9,7 @@ export interface FaultyRow {
   readonly fault: RowFault;
 }
 
-const shown = 20;
+const shown = 8;
 
 /** Rows that wait for something to be mended, each a way to its cell. */
 export function UnsavedRows({
@@ -22,7 +22,7 @@ export function UnsavedRows({
   if (rows.length === 0) return null;
   return (
     <Notice tone="attention" title={`${countOf(rows.length, 'row is', 'rows are')} not saved yet`}>
-      <ul className="flex flex-wrap gap-x-4 gap-y-1">
+      <ul className="flex flex-col gap-1">
         {rows.slice(0, shown).map((faulty) => (
           <li key={faulty.row.key}>
             <button
@@ -30,9 +30,10 @@ export function UnsavedRows({
               className="min-h-6 text-start text-marking underline"
               onClick={() => onGo(faulty)}
             >
-              Row {faulty.index + 1}, balloon {faulty.row.cells.balloon || 'missing'}:{' '}
+              Row {faulty.index + 1}, balloon {faulty.row.cells.balloon || 'missing'},{' '}
               {columnWords[faulty.fault.column].toLowerCase()}
             </button>
+            : {faulty.fault.message}
           </li>
         ))}
         {rows.length > shown && <li>and {rows.length - shown} more</li>}

@@ -53,7 +53,7 @@ export function DrawingPanel({ revision }: { revision: RevisionResponse }) {
           <span className="text-pencil">
             {drawing.uploadedBy}, <Moment at={drawing.uploadedAt} />
           </span>
-          <Copyable value={drawing.sha256} what="SHA-256 of the drawing" shorten />
+          <Copyable value={drawing.sha256} what="SHA-256 of the drawing" shorten={12} />
           <DownloadLink href={`/api/files/${drawing.id}/content`} size="small">
             Download
           </DownloadLink>
