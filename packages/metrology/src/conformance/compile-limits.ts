@@ -89,11 +89,9 @@ export function boundsAtScale(compiled: CompiledLimits, scale: number): ScaledBo
   const known = compiled.scaled[scale];
   if (known !== undefined) return known;
   const { accept, possible, acceptEmpty } = compiled;
-  const acceptLow = acceptEmpty ? Infinity : scaledBound(accept.low, scale, 'low');
-  const acceptHigh = acceptEmpty ? -Infinity : scaledBound(accept.high, scale, 'high');
   const bounds = {
-    acceptLow,
-    acceptHigh,
+    acceptLow: acceptEmpty ? Infinity : scaledBound(accept.low, scale, 'low'),
+    acceptHigh: scaledBound(accept.high, scale, 'high'),
     possibleLow: scaledBound(possible.low, scale, 'low'),
     possibleHigh: scaledBound(possible.high, scale, 'high'),
   };

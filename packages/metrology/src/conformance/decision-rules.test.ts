@@ -143,6 +143,34 @@ describe('guard bands in the sense of ISO 14253-1', () => {
     expect(judgeReading('0.061', flatness, guard('customer', '0.01')).verdict).toBe('out-of-tolerance');
   });
 
+  it('says who has not proved what, also exactly on a limit or a natural bound', () => {
+    expect(judgeReading('25.021', LIMITS, guard('supplier'))).toEqual({
+      verdict: 'undecided',
+      value: '25.021',
+      code: 'within-uncertainty',
+      countsAgainst: 'supplier',
+      reason: 'Within the uncertainty of a limit: the supplier has not proved that the value conforms',
+    });
+    expect(judgeReading('25.000', LIMITS, guard('customer'))).toEqual({
+      verdict: 'undecided',
+      value: '25.000',
+      code: 'within-uncertainty',
+      countsAgainst: 'customer',
+      reason:
+        'Within the uncertainty of a limit: the customer has not proved that the value does not conform',
+    });
+    const flatness = { lower: '0', upper: '0.005', naturalLower: true };
+    const purity = { lower: '99.5', upper: '100', naturalUpper: true };
+    for (const [text, limits] of [
+      ['0', flatness],
+      ['100', purity],
+      ['99.4', purity],
+    ] as const)
+      expect(judgeReading(text, limits, guard('supplier', '0.6'))).toMatchObject({
+        code: 'within-uncertainty',
+      });
+  });
+
   it('accepts nothing when the bands use up the tolerance, yet still refuses', () => {
     const compiled = compileLimits({ lower: '0', upper: '1' }, guard('supplier', '0.6')) as CompiledLimits;
     expect(compiled.acceptEmpty).toBe(true);
@@ -212,6 +240,11 @@ describe('the two methods of ASTM E29', () => {
       verdict: 'out-of-tolerance',
       rounded: '-2.4',
     });
+    expect(judgeReading('-1.24', { lower: null, upper: '-1.25' }, { ...rule, decimals: 1 }).verdict).toBe(
+      'out-of-tolerance',
+    );
+    expect(judgeReading('26', { lower: '25.001', upper: null }, rule).verdict).toBe('in-tolerance');
+    expect(compileLimits({ lower: '0', upper: '1' }, { ...rule, decimals: 60 })).not.toHaveProperty('code');
     for (const decimals of [-1, 1.5, 61, NaN])
       expect(compileLimits({ lower: '0', upper: '1' }, { ...rule, decimals })).toMatchObject({
         code: 'decimals-invalid',

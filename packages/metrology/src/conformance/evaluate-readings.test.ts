@@ -129,6 +129,19 @@ describe('a sample of readings', () => {
     expect([...evaluate(['1', '2'], { lower: '1.5', upper: null }).verdicts]).toEqual([2, 1]);
   });
 
+  it('compares with limits that are not multiples of the last digit read, on both sides of 0', () => {
+    expect([...evaluate(['-1', '-2'], { lower: null, upper: '-1.25' }).verdicts]).toEqual([2, 1]);
+    expect([...evaluate(['-1', '-2'], { lower: '-1.25', upper: null }).verdicts]).toEqual([1, 2]);
+    const rounded = (texts: readonly string[], limits: Limits) => {
+      const found = evaluateReadings(texts, limits, { kind: 'simple', rounding: 'e29' });
+      return isUndetermined(found) ? found.code : [...found.verdicts];
+    };
+    const least = ['25.0005', '25.00051', '25.001', '25.00', '26'];
+    expect(rounded(least, { lower: '25.001', upper: null })).toEqual([2, 1, 1, 2, 1]);
+    const most = ['25.0215', '25.02149', '25.021', '25.03', '25'];
+    expect(rounded(most, { lower: null, upper: '25.021' })).toEqual([2, 1, 1, 2, 1]);
+  });
+
   it('without limits, or beyond a natural bound, is undecided', () => {
     expect(evaluate(['1', '2'], { lower: null, upper: null })).toMatchObject({
       worst: 'undecided',

@@ -87,7 +87,7 @@ export function judgeDecimal(value: Decimal, compiled: CompiledLimits): ReadingJ
     verdict,
     value: formatDecimal(value),
     ...(roundingPlaces === null ? {} : { rounded: formatDecimal(compared) }),
-    ...(verdict === 'in-tolerance' ? {} : beyondLimit(compared, compiled)),
+    ...beyondLimit(compared, compiled),
     ...(verdict === 'undecided' ? explainUndecided(value, compiled) : {}),
   };
 }
