@@ -11,7 +11,7 @@ import {
   type Prepare,
   type Stream,
 } from './package-context.ts';
-import { storedRowColumns, type StoredRow } from './write-readings.ts';
+import { storedRowColumns, type StoredRow } from './stored-row.ts';
 
 export interface CheckedGauge {
   readonly id: string;

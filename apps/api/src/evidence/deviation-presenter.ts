@@ -6,7 +6,7 @@ import type { CharacteristicFacts } from './characteristic-facts.ts';
 import { deviationCovers, outReadings } from './deviation-cover.ts';
 import type { Characteristics } from './package-context.ts';
 import { decodeReadings } from './readings-text.ts';
-import type { StoredRow } from './write-readings.ts';
+import type { StoredRow } from './stored-row.ts';
 import type { Actor } from '../http/actor.ts';
 
 export interface DeviationScene {

@@ -10,7 +10,7 @@ import { limitCompiler, requiredPieces, type Stream } from './package-context.ts
 import { evaluateRow } from './evaluate-row.ts';
 import { sizeBalloonOf } from './characteristic-facts.ts';
 import { decodeReadings } from './readings-text.ts';
-import { emptyRow, type StoredRow } from './write-readings.ts';
+import { emptyRow, type StoredRow } from './stored-row.ts';
 
 /** One characteristic in one stream, with what was stored and what the check says of it. */
 export interface JudgedRow {

@@ -2,7 +2,7 @@ import type { RowResult, SheetCharacteristic } from '@trammel/shared/measurement
 import type { CharacteristicFacts } from './characteristic-facts.ts';
 import { requiredPieces, type JudgingRules, type Piece } from './package-context.ts';
 import { decodeReadings } from './readings-text.ts';
-import type { StoredRow } from './write-readings.ts';
+import type { StoredRow } from './stored-row.ts';
 
 /** Slots of each stream's pieces, in the order in which they are shown. */
 export function slotsByStream(pieces: readonly Piece[]): Map<string, number[]> {

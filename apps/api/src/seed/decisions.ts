@@ -3,10 +3,8 @@ import { createSigner } from '../evidence/signing.ts';
 import { draftDisposition, signDisposition } from '../features/dispositions/dispositions.service.ts';
 import type { Asked } from '../features/dispositions/dispositions.rules.ts';
 import { findReview } from '../features/submission-review/submission-review.queries.ts';
-import {
-  decideCharacteristic,
-  decideElement,
-} from '../features/submission-review/submission-review.service.ts';
+import { decideElement } from '../features/submission-review/element-decisions.service.ts';
+import { decideCharacteristic } from '../features/submission-review/submission-review.service.ts';
 import { findElements } from '../features/submissions/elements.queries.ts';
 import { readWarrant, saveWarrant, signWarrant } from '../features/warrants/warrants.service.ts';
 import type { WarrantFacts } from '@trammel/shared/warrants';

@@ -1,3 +1,4 @@
+// Longer than most: the steps of one story share one scene, and a test reads them in one place.
 import type { CharacteristicRequest } from '@trammel/shared/characteristics';
 import type { MeasurementSheetResponse } from '@trammel/shared/measurements';
 import type { SaveRequestRequest } from '@trammel/shared/requests';

@@ -16,22 +16,16 @@ import {
   type Characteristics,
   type Prepare,
 } from '../../evidence/package-context.ts';
-import { storedRowColumns, type StoredRow } from '../../evidence/write-readings.ts';
+import { storedRowColumns, type StoredRow } from '../../evidence/stored-row.ts';
 import type { Deed } from '../../http/deed.ts';
 import { Conflict, Invalid, NotFound, type FieldError } from '../../http/problems.ts';
 import { updateVersioned } from '../../http/versions.ts';
-import { enqueueMail } from '../../mail/outbox.ts';
-import { deviationAskedMail, deviationDecidedMail } from '../../mail/templates/deviations.ts';
-import {
-  mailFactsOfRequest,
-  peopleOfCustomer,
-  peopleWithRole,
-} from '../notifications/notifications.queries.ts';
 import {
   findSubmissionForActor,
   requireOpenForSupplier,
   type FoundSubmission,
 } from '../submissions/submissions.queries.ts';
+import { mailCustomer, mailSupplier } from './deviation-mails.ts';
 import { findDeviations } from './deviations.queries.ts';
 import { presentDeviation, type DeviationScene } from '../../evidence/deviation-presenter.ts';
 import { rangeFaults } from './deviations.rules.ts';
@@ -233,48 +227,4 @@ function termsOf(deviation: Deviation) {
 async function countOpen(manager: EntityManager, submissionId: string): Promise<void> {
   const deviationsOpen = await manager.countBy(Deviation, { submissionId, state: 'sent' });
   await manager.update(Submission, { id: submissionId }, { deviationsOpen });
-}
-
-async function mailCustomer(
-  manager: EntityManager,
-  deed: Deed,
-  submission: Submission,
-  number: number,
-  balloon: string,
-): Promise<void> {
-  const facts = await mailFactsOfRequest(
-    manager,
-    submission.requestId,
-    deed.publicUrl,
-    `/submissions/${submission.id}/deviations`,
-  );
-  for (const person of await peopleOfCustomer(manager, submission.requestId)) {
-    enqueueMail(manager, deed.now, {
-      kind: 'deviation-asked',
-      recipient: person.email,
-      ...deviationAskedMail(person.name, facts, number, balloon),
-    });
-  }
-}
-
-async function mailSupplier(
-  manager: EntityManager,
-  deed: Deed,
-  submission: Submission,
-  deviation: Deviation,
-  decision: 'granted' | 'refused',
-): Promise<void> {
-  const facts = await mailFactsOfRequest(
-    manager,
-    submission.requestId,
-    deed.publicUrl,
-    `/submissions/${submission.id}/deviations`,
-  );
-  for (const person of await peopleWithRole(manager, submission.supplierId, 'supplier-quality')) {
-    enqueueMail(manager, deed.now, {
-      kind: `deviation-${decision}`,
-      recipient: person.email,
-      ...deviationDecidedMail(person.name, facts, deviation.number, decision),
-    });
-  }
 }

@@ -9,7 +9,7 @@ import {
   type Prepare,
 } from '../../evidence/package-context.ts';
 import { presentCharacteristic, presentRow, slotsByStream } from '../../evidence/row-presenter.ts';
-import { storedRowColumns, type StoredRow } from '../../evidence/write-readings.ts';
+import { storedRowColumns, type StoredRow } from '../../evidence/stored-row.ts';
 
 export interface SheetPage {
   readonly after: number;

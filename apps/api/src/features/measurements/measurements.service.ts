@@ -14,13 +14,9 @@ import { writeStatement } from '../../database/raw.ts';
 import { takesAttribute } from '../../evidence/characteristic-facts.ts';
 import { characteristicsOf, piecesOf, type Prepare } from '../../evidence/package-context.ts';
 import { presentRow, slotsByStream } from '../../evidence/row-presenter.ts';
-import {
-  rejudgeRows,
-  storedRowColumns,
-  writeReadings,
-  type StoredRow,
-  type WritingScope,
-} from '../../evidence/write-readings.ts';
+import type { WritingScope } from '../../evidence/row-work.ts';
+import { storedRowColumns, type StoredRow } from '../../evidence/stored-row.ts';
+import { rejudgeRows, writeReadings } from '../../evidence/write-readings.ts';
 import type { Deed } from '../../http/deed.ts';
 import { invalidField, NotFound, Stale } from '../../http/problems.ts';
 import { findSubmissionForActor, requireOpenForSupplier } from '../submissions/submissions.queries.ts';

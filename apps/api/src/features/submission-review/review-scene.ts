@@ -17,7 +17,7 @@ import {
   type Prepare,
   type Stream,
 } from '../../evidence/package-context.ts';
-import { storedRowColumns, type StoredRow } from '../../evidence/write-readings.ts';
+import { storedRowColumns, type StoredRow } from '../../evidence/stored-row.ts';
 import { Conflict } from '../../http/problems.ts';
 import { findOfficialCheck } from '../checks/checks.queries.ts';
 import { isClean, overallVerdict } from './submission-review.rules.ts';

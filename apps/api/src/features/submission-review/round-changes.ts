@@ -2,7 +2,7 @@ import { Submission } from '../../database/entities/submission.entity.ts';
 import type { EntityManager } from 'typeorm';
 import type { CharacteristicFacts } from '../../evidence/characteristic-facts.ts';
 import { characteristicsOf, type Prepare } from '../../evidence/package-context.ts';
-import { storedRowColumns, type StoredRow } from '../../evidence/write-readings.ts';
+import { storedRowColumns, type StoredRow } from '../../evidence/stored-row.ts';
 
 export type RowChange = 'new' | 'readings' | 'limits' | 'same';
 

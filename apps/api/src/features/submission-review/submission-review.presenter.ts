@@ -45,8 +45,6 @@ export interface RowView {
 
 export function presentReviewRow(row: SceneRow, view: RowView): ReviewRow {
   const { scene, side, actor, slots, changes } = view;
-  // Until the disposition is signed, marks are the customer's own working state.
-  const decisionShown = side === 'customer' || scene.submission.decidedAt !== null;
   const deviationScene = {
     submission: scene.submission,
     side,
@@ -60,7 +58,7 @@ export function presentReviewRow(row: SceneRow, view: RowView): ReviewRow {
     results: row.results.map((result) => presentRow(result, slots)),
     findings: row.findings,
     deviations: row.deviations.map((deviation) => presentDeviation(deviation, deviationScene, actor)),
-    decision: presentDecision(decisionShown ? row.decision : null, side),
+    decision: presentDecision(row.decision, side),
     clean: row.clean,
     change: changes?.get(row.facts.id) ?? null,
   };

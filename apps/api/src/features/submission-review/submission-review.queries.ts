@@ -4,7 +4,7 @@ import { readStatement } from '../../database/raw.ts';
 import { isSpecial } from '../../evidence/characteristic-facts.ts';
 import { slotsByStream } from '../../evidence/row-presenter.ts';
 import type { Deed } from '../../http/deed.ts';
-import { findSubmissionForActor, requireEvidence } from '../submissions/submissions.queries.ts';
+import { findSubmissionForActor, requireEvidence, type Side } from '../submissions/submissions.queries.ts';
 import { loadScene, type ReviewScene, type SceneRow } from './review-scene.ts';
 import { changesSince, type RowChange } from './round-changes.ts';
 import { presentReviewRow } from './submission-review.presenter.ts';
@@ -18,7 +18,7 @@ export async function findReview(deed: Deed, submissionId: string, view: View): 
   const found = await findSubmissionForActor(manager, deed.actor, submissionId);
   requireEvidence(found);
   const prepare = (sql: string) => readStatement(deed.reader, sql);
-  const scene = await loadScene(manager, prepare, found.submission);
+  const scene = withVisibleMarks(await loadScene(manager, prepare, found.submission), found.side);
   const changes = await changesSince(manager, prepare, found.submission);
   const tests = filters(changes);
   const kept = scene.rows.filter(tests[view.show]);
@@ -47,6 +47,15 @@ export async function findReview(deed: Deed, submissionId: string, view: View): 
     },
     packageFindings: packageFindings(scene),
   };
+}
+
+/**
+ * Until the disposition is signed, marks are the customer's own working state: to the supplier every row is unmarked, in
+ * its answers, in the counts and under every filter.
+ */
+function withVisibleMarks(scene: ReviewScene, side: Side): ReviewScene {
+  if (side === 'customer' || scene.submission.decidedAt !== null) return scene;
+  return { ...scene, rows: scene.rows.map((row) => ({ ...row, decision: null })) };
 }
 
 function filters(

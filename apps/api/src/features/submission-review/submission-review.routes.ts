@@ -12,7 +12,8 @@ import {
 import type { ApiRouter } from '../../http/api-router.ts';
 import { route } from '../../http/route.ts';
 import { findReview } from './submission-review.queries.ts';
-import { acceptCleanRows, decideCharacteristic, decideElement } from './submission-review.service.ts';
+import { decideElement } from './element-decisions.service.ts';
+import { acceptCleanRows, decideCharacteristic } from './submission-review.service.ts';
 
 const params = z.strictObject({ submissionId: id });
 

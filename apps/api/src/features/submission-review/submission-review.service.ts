@@ -1,23 +1,14 @@
 import { randomUUID } from 'node:crypto';
 import type { EntityManager } from 'typeorm';
 import type { z } from 'zod';
-import type {
-  decideCharacteristicRequest,
-  decideElementRequest,
-  DecisionsResponse,
-  ElementDecisionResponse,
-} from '@trammel/shared/submission-review';
-import { openForReview } from '@trammel/shared/status';
+import type { decideCharacteristicRequest, DecisionsResponse } from '@trammel/shared/submission-review';
 import { appendAudit } from '../../database/append-audit.ts';
 import { CharacteristicDecision } from '../../database/entities/characteristic-decision.entity.ts';
-import { ElementDecision } from '../../database/entities/element-decision.entity.ts';
-import { SubmissionElement } from '../../database/entities/submission-element.entity.ts';
-import { Submission } from '../../database/entities/submission.entity.ts';
 import { writeStatement } from '../../database/raw.ts';
 import { decodeReadings } from '../../evidence/readings-text.ts';
 import type { Deed } from '../../http/deed.ts';
-import { Conflict, Forbidden, Invalid, NotFound, Stale } from '../../http/problems.ts';
-import { findSubmissionForActor } from '../submissions/submissions.queries.ts';
+import { Invalid, NotFound, Stale } from '../../http/problems.ts';
+import { beginReview, openReview } from './open-review.ts';
 import { loadScene, type ReviewScene, type SceneRow } from './review-scene.ts';
 import { presentDecision } from './submission-review.presenter.ts';
 import { refusalOfMark } from './submission-review.rules.ts';
@@ -124,79 +115,6 @@ export function acceptCleanRows(
   });
 }
 
-export function decideElement(
-  deed: Deed,
-  key: { submissionId: string; elementId: string },
-  version: number,
-  command: z.output<typeof decideElementRequest>,
-): Promise<ElementDecisionResponse> {
-  return deed.transact(async (manager) => {
-    const submission = await openReview(manager, deed, key.submissionId);
-    const element = await manager.findOneBy(SubmissionElement, {
-      id: key.elementId,
-      submissionId: submission.id,
-    });
-    if (!element) throw new NotFound();
-    const before = await manager.findOneBy(ElementDecision, { elementId: element.id });
-    if ((before?.version ?? 0) !== version) {
-      throw new Stale(
-        before && presentElementDecision(before),
-        'A colleague marked this element since you opened it.',
-      );
-    }
-    if (command.mark !== 'accepted' && command.mark !== null && command.remark === '') {
-      throw new Invalid([
-        { pointer: '/remark', detail: 'Say to the supplier what is wrong or what is asked.' },
-      ]);
-    }
-    const values = {
-      ...command,
-      decidedById: deed.actor.userId,
-      decidedByName: deed.actor.name,
-      decidedAt: deed.now,
-    };
-    if (before) await manager.update(ElementDecision, { id: before.id, version }, values);
-    else
-      await manager.insert(ElementDecision, {
-        id: randomUUID(),
-        submissionId: submission.id,
-        elementId: element.id,
-        ...values,
-      });
-    await beginReview(manager, deed, submission);
-    appendAudit(manager, deed, {
-      action: 'element.marked',
-      objectType: 'submission',
-      objectId: submission.id,
-      summary: `${element.label} of ${submission.partNumber}: ${command.mark ?? 'mark taken back'}`,
-      before: before && { mark: before.mark, remark: before.remark, internalRemark: before.internalRemark },
-      after: command,
-    });
-    return presentElementDecision(await manager.findOneByOrFail(ElementDecision, { elementId: element.id }));
-  });
-}
-
-async function openReview(manager: EntityManager, deed: Deed, submissionId: string): Promise<Submission> {
-  const { submission, side } = await findSubmissionForActor(manager, deed.actor, submissionId);
-  if (side !== 'customer') throw new NotFound();
-  if (!openForReview.includes(submission.state)) {
-    throw new Conflict(
-      submission.decidedAt === null
-        ? 'The supplier has not submitted this round yet.'
-        : 'This round is decided; its marks stay as they are. A correction needs a new round.',
-    );
-  }
-  if (submission.submittedById === deed.actor.userId)
-    throw new Forbidden('Nobody decides on what they submitted.');
-  return submission;
-}
-
-async function beginReview(manager: EntityManager, deed: Deed, submission: Submission): Promise<void> {
-  const begun =
-    submission.state === 'submitted' ? { state: 'in-review' as const, reviewStartedAt: deed.now } : {};
-  await manager.update(Submission, { id: submission.id }, { ...begun, updatedAt: deed.now });
-}
-
 async function writeDecision(
   manager: EntityManager,
   deed: Deed,
@@ -242,16 +160,4 @@ function markedRow(scene: ReviewScene, row: SceneRow) {
       out: result.verdict === 'out-of-tolerance',
     }));
   return { facts: row.facts, verdict: row.verdict, deviations: row.deviations, streams };
-}
-
-function presentElementDecision(decision: ElementDecision): ElementDecisionResponse {
-  return {
-    elementId: decision.elementId,
-    mark: decision.mark,
-    remark: decision.remark,
-    internalRemark: decision.internalRemark,
-    by: decision.decidedByName,
-    at: decision.decidedAt,
-    markVersion: decision.version,
-  };
 }

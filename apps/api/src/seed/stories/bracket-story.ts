@@ -5,15 +5,13 @@ import { demoReadings } from '../fixtures/readings.ts';
 import { decide, signAndSubmit, stateWarrant } from '../decisions.ts';
 import { usualElements } from '../elements.ts';
 import { bracket } from '../parts/bracket.ts';
+import { fillElements, nameGauges, type DemoGauge } from '../evidence-steps.ts';
 import {
   acknowledge,
-  fillElements,
   measure,
-  nameGauges,
   seedPart,
   seedRequest,
   sheetOf,
-  type DemoGauge,
   type SeededPackage,
   type Seeding,
 } from '../steps.ts';

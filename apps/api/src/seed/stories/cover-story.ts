@@ -3,11 +3,10 @@ import { demoReadings } from '../fixtures/readings.ts';
 import { decide, markAll, signAndSubmit, stateWarrant } from '../decisions.ts';
 import { usualElements } from '../elements.ts';
 import { cover } from '../parts/cover.ts';
+import { fillElements, nameGauges } from '../evidence-steps.ts';
 import {
   acknowledge,
-  fillElements,
   measure,
-  nameGauges,
   seedPart,
   seedRequest,
   sheetOf,

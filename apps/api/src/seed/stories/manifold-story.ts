@@ -8,16 +8,14 @@ import { demoReadings } from '../fixtures/readings.ts';
 import { decide, markAll, signAndSubmit, stateWarrant } from '../decisions.ts';
 import { usualElements } from '../elements.ts';
 import { manifold, manifoldNext } from '../parts/manifold.ts';
+import { fillElements, nameGauges, type DemoGauge } from '../evidence-steps.ts';
 import {
   acknowledge,
-  fillElements,
   measure,
-  nameGauges,
   releaseWithDrawing,
   seedPart,
   seedRequest,
   sheetOf,
-  type DemoGauge,
   type DemoPart,
   type SeededPackage,
   type Seeding,

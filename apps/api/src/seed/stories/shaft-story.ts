@@ -2,15 +2,8 @@ import { demoReadings } from '../fixtures/readings.ts';
 import { decide, markAll, signAndSubmit, stateWarrant } from '../decisions.ts';
 import { usualElements } from '../elements.ts';
 import { shaft } from '../parts/shaft.ts';
-import {
-  acknowledge,
-  fillElements,
-  measure,
-  nameGauges,
-  seedPart,
-  seedRequest,
-  type Seeding,
-} from '../steps.ts';
+import { fillElements, nameGauges } from '../evidence-steps.ts';
+import { acknowledge, measure, seedPart, seedRequest, type Seeding } from '../steps.ts';
 
 /** Output shaft: a first try that passes. Approved three weeks ago. */
 export async function shaftStory(seeding: Seeding): Promise<void> {

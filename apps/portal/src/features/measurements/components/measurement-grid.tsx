@@ -1,6 +1,6 @@
 import { useVirtualizer } from '@tanstack/react-virtual';
 import { useEffect, useRef, useState, type KeyboardEvent, type ReactNode } from 'react';
-import { useKeys, type KeyBinding } from '../../../lib/use-keys.ts';
+import { useKeys } from '../../../lib/use-keys.ts';
 import { formatBlock, parseBlock } from '../clipboard-block.ts';
 import { isWithin, moveTo, rangeOf, stepAlong, type Place, type Selection } from '../grid-selection.ts';
 import type { SheetModel } from '../sheet-model.ts';
@@ -8,7 +8,9 @@ import type { UndoStack } from '../undo-stack.ts';
 import { CellEditor, type EditorExit } from './cell-editor.tsx';
 import { GridHeader } from './grid-header.tsx';
 import { cellId, GridRow } from './grid-row.tsx';
+import { gridKeys } from './grid-keys.ts';
 import { layout } from './grid-layout.ts';
+import { useStableActs } from './use-stable-acts.ts';
 
 interface MeasurementGridProps {
   model: SheetModel;
@@ -23,20 +25,6 @@ interface MeasurementGridProps {
 }
 
 const pageRows = 12;
-
-/** Heard by the grid itself; listed for the keyboard help. */
-const gridKeys: KeyBinding[] = [
-  { keys: 'Enter', label: 'Edit, or take the value and go down' },
-  { keys: 'Tab', label: 'Take the value and go right' },
-  { keys: 'shift+ArrowDown', label: 'Select more' },
-  { keys: 'ctrl+c', label: 'Copy the block' },
-  { keys: 'ctrl+v', label: 'Paste a block from a spreadsheet' },
-  { keys: 'ctrl+d', label: 'Fill the selection from its first row' },
-  { keys: 'Delete', label: 'Clear the selection' },
-  { keys: 'ctrl+z', label: 'Take back' },
-  { keys: 'ctrl+y', label: 'Do again' },
-  { keys: 'ctrl+s', label: 'Save now' },
-];
 
 /** Readings as a sheet: arrows, Enter, Tab, a block from the clipboard, fill down, undo. Rows and columns out of view are not drawn. */
 export function MeasurementGrid({
@@ -252,22 +240,4 @@ export function MeasurementGrid({
       </div>
     </div>
   );
-}
-
-interface PointerActs {
-  point: (row: number, column: number, extend: boolean) => void;
-  open: (row: number, column: number) => void;
-}
-
-/** The same two functions for every drawing, so that rows which did not change are left alone. */
-function useStableActs(acts: PointerActs): PointerActs {
-  const latest = useRef(acts);
-  useEffect(() => {
-    latest.current = acts;
-  });
-  const [stable] = useState<PointerActs>(() => ({
-    point: (row, column, extend) => latest.current.point(row, column, extend),
-    open: (row, column) => latest.current.open(row, column),
-  }));
-  return stable;
 }
