@@ -6,7 +6,6 @@ import twoProcesses from '../testing/reference/capability-cpm-two-processes.json
 import oneSided from '../testing/reference/capability-one-sided.json' with { type: 'json' };
 import ppmTable from '../testing/reference/capability-ppm-table.json' with { type: 'json' };
 import sigmaLevel from '../testing/reference/capability-sigma-level.json' with { type: 'json' };
-import thresholds from '../testing/reference/capability-thresholds-ppap.json' with { type: 'json' };
 import nist from '../testing/reference/nist-capability-616.json' with { type: 'json' };
 import fixture from '../testing/fixtures/capability-fits.json' with { type: 'json' };
 import { isUndetermined } from '../result.ts';
@@ -16,7 +15,6 @@ import {
   observedFractionOutside,
   shiftedDefectsPerMillion,
 } from './fraction-outside.ts';
-import { indexGate } from './index-gate.ts';
 import {
   minimumInterval,
   minimumLowerBound,
@@ -25,7 +23,6 @@ import {
   potentialLowerBound,
 } from './index-intervals.ts';
 import { normalIndices } from './normal-indices.ts';
-import { readingsForObservedIndex, readingsForTrueIndex } from './sample-size.ts';
 
 function sure<T>(answer: T | Undetermined): T {
   if (isUndetermined(answer)) throw new Error(answer.reason);
@@ -92,6 +89,28 @@ describe('normal indices', () => {
       expect(result.cpm).toMatchObject({ code: 'one-sided' });
       expect(given.usl === null ? result.upperSide : result.lowerSide).toMatchObject({ code: 'no-limit' });
     });
+  });
+
+  it('names the worse side, the missing side and what it was asked', () => {
+    const low = sure(normalIndices(1, 1, { lower: 0, upper: 10 }));
+    expect(low.worstSide).toBe('lower');
+    expect(low.inputs).toEqual({ mean: 1, sigma: 1, limits: { lower: 0, upper: 10 } });
+    expect(sure(normalIndices(5, 1, { lower: 0, upper: 10 })).worstSide).toBe('upper');
+    const one = sure(normalIndices(1, 1, { lower: 0 }));
+    expect(one.worstSide).toBe('lower');
+    expect(one.upperSide).toMatchObject({ reason: 'There is no upper tolerance limit' });
+    expect(sure(normalIndices(1, 1, { upper: 3 })).lowerSide).toMatchObject({
+      reason: 'There is no lower tolerance limit',
+    });
+  });
+
+  it('measures Cpm from the target where one is given, also off the middle', () => {
+    // (10 - 0)/(6 sqrt(1 + (5 - 7)^2)) and, from the middle, 10/6.
+    expect(sure(sure(normalIndices(5, 1, { lower: 0, upper: 10, target: 7 })).cpm)).toBeCloseTo(
+      10 / (6 * Math.sqrt(5)),
+      12,
+    );
+    expect(sure(sure(normalIndices(5, 1, { lower: 0, upper: 10 })).cpm)).toBeCloseTo(10 / 6, 12);
   });
 
   it('shifts and scales with the readings', () => {
@@ -247,38 +266,4 @@ describe('confidence limits', () => {
     expect(minimumLowerBound(1, 1)).toMatchObject({ code: 'too-few' });
     expect(potentialInterval(NaN, 30)).toMatchObject({ code: 'not-finite' });
   });
-});
-
-describe('sample size', () => {
-  it('names the first n whose bound reaches the required index', () => {
-    for (const [observed, required] of [
-      [1.67, 1.33],
-      [1.4, 1.33],
-      [2.29, 1.33],
-    ] as const) {
-      const { n } = sure(readingsForObservedIndex(observed, required));
-      expect(sure(minimumLowerBound(observed, n)).lower).toBeGreaterThanOrEqual(required);
-      expect(sure(minimumLowerBound(observed, n - 1)).lower).toBeLessThan(required);
-    }
-    expect(sure(readingsForObservedIndex(1.67, 1.33)).n).toBe(37);
-  });
-
-  it('needs more readings for more power and for a smaller distance', () => {
-    const n = (trueIndex: number, power: number) => sure(readingsForTrueIndex(trueIndex, 1.33, { power })).n;
-    expect(n(1.67, 0.9)).toBeGreaterThan(n(1.67, 0.8));
-    expect(n(1.5, 0.8)).toBeGreaterThan(n(1.67, 0.8));
-    expect(readingsForTrueIndex(1.33, 1.33)).toMatchObject({ code: 'not-above' });
-    expect(readingsForObservedIndex(1.4, 1.3999999)).toMatchObject({ code: 'no-size' });
-  });
-});
-
-it('gates an index as the trade does, 1.67 and 1.33 both left to the reviewer', () => {
-  const words = {
-    met: 'meets',
-    'reviewer-decides': 'may be acceptable - contact customer',
-    'not-met': 'does not meet',
-  };
-  expect(thresholds.inputs.index_values.map((index) => words[indexGate(index)])).toEqual(
-    thresholds.expected.decision,
-  );
 });
