@@ -34,6 +34,7 @@ import { noteAuditHead, verifyAtStart } from './features/audit/audit-anchor.job.
 import { sweepPendingFiles } from './features/documents/documents.service.ts';
 import { gaugesRoutes } from './features/gauges/gauges.routes.ts';
 import { sendReminders } from './features/notifications/reminders.ts';
+import { reportsRoutes } from './features/reports/reports.routes.ts';
 import { requestsRoutes } from './features/requests/requests.routes.ts';
 import { evidenceRoutes } from './features/submissions/evidence.routes.ts';
 import { submissionsRoutes } from './features/submissions/submissions.routes.ts';
@@ -141,6 +142,7 @@ export function createApp(dependencies: Dependencies): App {
   submissionReviewRoutes(router);
   dispositionsRoutes(router);
   buyingStatusRoutes(router);
+  reportsRoutes(router);
   auditRoutes(router, anchors);
   documentsRoutes(router, store);
 
