@@ -1,10 +1,11 @@
 import type { PDFDocumentProxy } from 'pdfjs-dist';
-import { useEffect, useRef, useState, type KeyboardEvent } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import type { FileResponse } from '@trammel/shared/documents';
 import { Button } from '../../../components/ui/button.tsx';
 import { DownloadLink } from '../../../components/ui/link-button.tsx';
 import { Notice } from '../../../components/ui/notice.tsx';
 import { Progress } from '../../../components/ui/progress.tsx';
+import { useKeys } from '../../../lib/use-keys.ts';
 import { openPdf, pdfFailure } from '../pdf-document.ts';
 import { PdfPage } from './pdf-page.tsx';
 
@@ -32,19 +33,13 @@ export function FileViewer({ file }: { file: FileResponse }) {
     const next = by === 1 ? steps.find((one) => one > zoom) : [...steps].reverse().find((one) => one < zoom);
     if (next !== undefined) setZoom(next);
   };
-  const onKeyDown = (event: KeyboardEvent) => {
-    const acts: Record<string, () => void> = {
-      PageDown: () => turnTo(page + 1),
-      PageUp: () => turnTo(page - 1),
-      '+': () => step(1),
-      '-': () => step(-1),
-      '0': () => setZoom(1),
-    };
-    const act = acts[event.key];
-    if (!act) return;
-    event.preventDefault();
-    act();
-  };
+  useKeys('Viewer', [
+    { keys: 'PageDown', label: 'Next page', run: () => turnTo(page + 1) },
+    { keys: 'PageUp', label: 'Page before', run: () => turnTo(page - 1) },
+    { keys: '+', label: 'Zoom in', run: () => step(1) },
+    { keys: '-', label: 'Zoom out', run: () => step(-1) },
+    { keys: '0', label: 'Fit to width', run: () => setZoom(1) },
+  ]);
   const isImage = file.mediaType.startsWith('image/');
   return (
     <section
@@ -121,7 +116,6 @@ export function FileViewer({ file }: { file: FileResponse }) {
         aria-label="Sheet"
         tabIndex={0}
         className="h-[min(70vh,44rem)] overflow-auto bg-paper"
-        onKeyDown={onKeyDown}
       >
         {pdf.failure !== null && (
           <div className="p-3">

@@ -43,19 +43,19 @@ export function MeasurementSheet({ submissionId, sheet, importHref, onSaved }: M
   const [queue] = useState(
     () => new SaveQueue(model, submissionId, draftKey(user.id, `readings.${submissionId}`)),
   );
-  const [said, announce] = useState('');
+  const [said, announce] = useState(() => {
+    const recovered = queue.recover();
+    return recovered === 0
+      ? ''
+      : `${countOf(recovered, 'reading', 'readings')} of an earlier visit taken up again`;
+  });
   const [active, setActive] = useState({ row: 0, column: 0 });
   const [filling, setFilling] = useState(false);
   const [view, change] = useUrlState({ q: '', rows: 'all' });
   const state = useSyncExternalStore(queue.subscribe, queue.current);
   const version = useSyncExternalStore(model.subscribe, model.version);
 
-  useEffect(() => {
-    const recovered = queue.recover();
-    if (recovered > 0)
-      announce(`${countOf(recovered, 'reading', 'readings')} of an earlier visit taken up again`);
-    return () => queue.stop();
-  }, [queue]);
+  useEffect(() => () => queue.stop(), [queue]);
   useEffect(() => {
     if (state === 'saved' && version > 0) onSaved();
   }, [state, version, onSaved]);
