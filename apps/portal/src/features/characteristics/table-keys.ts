@@ -32,8 +32,14 @@ interface Pressed {
   readonly shiftKey: boolean;
 }
 
+/** ±, µ and the like are typed with AltGr, which arrives as ctrl and alt, or with option. */
+function isSign({ key, ctrlKey, altKey }: Pressed): boolean {
+  return altKey && key.length === 1 && (ctrlKey || !/[a-z0-9 ]/i.test(key));
+}
+
 /** What a key means in the grid while no cell is being edited; null leaves it to the browser. */
 export function commandOf(event: Pressed, column: number): TableCommand | null {
+  if (isSign(event)) return { do: 'type', text: event.key };
   const command = event.ctrlKey || event.metaKey;
   const key = event.key.toLowerCase();
   if (command) {

@@ -128,3 +128,22 @@ describe('a row of the table', () => {
     expect(checked.faults.map((fault) => fault.column)).toContain(column);
   });
 });
+
+describe('a key in the table', () => {
+  const press = (
+    key: string,
+    held: Partial<Record<'ctrlKey' | 'metaKey' | 'altKey' | 'shiftKey', true>> = {},
+  ) => commandOf({ key, ctrlKey: false, metaKey: false, altKey: false, shiftKey: false, ...held }, 3);
+
+  it('begins a cell with signs that need AltGr or option', () => {
+    expect(press('±', { altKey: true, shiftKey: true })).toEqual({ do: 'type', text: '±' });
+    expect(press('µ', { altKey: true, ctrlKey: true })).toEqual({ do: 'type', text: 'µ' });
+    expect(press('7')).toEqual({ do: 'type', text: '7' });
+  });
+
+  it('leaves the shortcuts of the browser alone', () => {
+    expect(press('f', { altKey: true })).toBeNull();
+    expect(press('r', { ctrlKey: true })).toBeNull();
+    expect(press('z', { metaKey: true, shiftKey: true })).toEqual({ do: 'redo' });
+  });
+});

@@ -33,6 +33,8 @@ const noGeometric: GeometricSpec = {
   sizeBalloon: null,
 };
 
+const besideField = new Set<TableColumn>(['balloon', 'description', 'decimals']);
+
 /** One characteristic with everything a drawing says of it; what is applied here is saved with the table. */
 export function CharacteristicDialog({ row, onClose, onApply }: CharacteristicDialogProps) {
   const [cells, setCells] = useState(row.cells);
@@ -55,6 +57,7 @@ export function CharacteristicDialog({ row, onClose, onApply }: CharacteristicDi
   };
   const { faults } = checkRow(next);
   const errorOf = (column: TableColumn) => faults.find((fault) => fault.column === column)?.message;
+  const elsewhere = faults.filter(({ column }) => !besideField.has(column));
   const id = (name: string) => `characteristic-${name}`;
 
   return (
@@ -191,9 +194,9 @@ export function CharacteristicDialog({ row, onClose, onApply }: CharacteristicDi
         value={details.note}
         onChange={(note) => setDetails({ ...details, note })}
       />
-      {faults.length > 0 && (
+      {elsewhere.length > 0 && (
         <ul className="text-vermilion">
-          {faults.map((fault) => (
+          {elsewhere.map((fault) => (
             <li key={fault.column + fault.message}>{fault.message}</li>
           ))}
         </ul>

@@ -14,6 +14,12 @@ export const columnWords: Record<TableColumn, string> = {
   method: 'Method',
 };
 
-/** Columns of the grid: the typed ones, then the limits and the button of the form. */
+/** Columns of the grid: the limits stand beside the tolerance they come from, the button of the form at the end. */
 export const tableTemplate =
-  '4.5rem 3.5rem 3.5rem 15rem 8rem 6rem 8rem 4.5rem 4.5rem 8.5rem 9rem 11rem 4.5rem';
+  '4.25rem 3.25rem 3.25rem 13rem 8rem 5.5rem 7.5rem 10rem 4rem 4.5rem 8rem 7rem 4rem';
+
+/** The limits follow the tolerance. */
+export const limitsColumn = 8;
+
+/** Place of a typed column in the grid, 1 upwards. */
+export const gridColumn = (at: number): number => (at + 1 < limitsColumn ? at + 1 : at + 2);

@@ -1,6 +1,6 @@
 import { unitSymbols } from '@trammel/shared/characteristics';
 import { memo, useEffect, useRef, useState, type KeyboardEvent } from 'react';
-import { columnWords, tableTemplate } from './column-words.ts';
+import { columnWords, gridColumn, limitsColumn, tableTemplate } from './column-words.ts';
 import { cn } from '../../../lib/cn.ts';
 import { showDecimal } from '../../../lib/format.ts';
 import { classWords, kindWords } from '../characteristic-words.ts';
@@ -28,12 +28,21 @@ export function TableHead() {
         className="grid h-8 items-center"
         style={{ gridTemplateColumns: tableTemplate }}
       >
-        {tableColumns.map((column) => (
-          <span key={column} role="columnheader" className="truncate px-2 text-[0.8125rem] font-semibold">
+        {tableColumns.map((column, at) => (
+          <span
+            key={column}
+            role="columnheader"
+            style={{ gridColumn: gridColumn(at), gridRow: 1 }}
+            className="truncate px-2 text-[0.8125rem] font-semibold"
+          >
             {columnWords[column]}
           </span>
         ))}
-        <span role="columnheader" className="px-2 text-[0.8125rem] font-semibold">
+        <span
+          role="columnheader"
+          style={{ gridColumn: limitsColumn, gridRow: 1 }}
+          className="px-2 text-[0.8125rem] font-semibold"
+        >
           Limits
         </span>
         <span role="columnheader" className="sr-only">
@@ -90,7 +99,8 @@ function Line({
             id={`${row.key}-${at}`}
             role="gridcell"
             tabIndex={-1}
-            aria-colindex={at + 1}
+            aria-colindex={gridColumn(at)}
+            style={{ gridColumn: gridColumn(at), gridRow: 1 }}
             aria-selected={active}
             aria-invalid={wrong || undefined}
             onMouseDown={(event) => {
@@ -129,7 +139,8 @@ function Line({
       })}
       <div
         role="gridcell"
-        aria-colindex={tableColumns.length + 1}
+        aria-colindex={limitsColumn}
+        style={{ gridColumn: limitsColumn, gridRow: 1 }}
         className="figures flex items-center px-2 text-pencil"
       >
         <span className="truncate">{limitsText(checked)}</span>
