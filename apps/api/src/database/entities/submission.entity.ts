@@ -25,6 +25,10 @@ import { PartRevision } from './part-revision.entity.ts';
 @Index(['customerId', 'submittedAt', 'id'])
 @Index(['customerId', 'desk', 'dueOn', 'id'])
 @Index(['customerId', 'desk', 'partNumber', 'id'])
+@Index(['customerId', 'dueOn', 'id'])
+@Index(['customerId', 'partNumber', 'id'])
+@Index(['supplierId', 'dueOn', 'id'])
+@Index(['supplierId', 'partNumber', 'id'])
 @Index(['revisionId'])
 export class Submission {
   @PrimaryColumn({ type: 'varchar' })

@@ -54,8 +54,8 @@ export function holderOf(
   return names[desk];
 }
 
-/** Whole days between two calendar dates or moments, counted from midnight to midnight UTC. */
-export function daysBetween(from: string, to: string): number {
-  const day = (text: string) => Date.parse(`${text.slice(0, 10)}T00:00:00.000Z`);
-  return Math.round((day(to) - day(from)) / 86_400_000);
+/** Number of a calendar date or of a moment's date in UTC, so that days are counted from midnight to midnight. */
+export function dayNumber(text: string): number {
+  const [year, month, day] = [text.slice(0, 4), text.slice(5, 7), text.slice(8, 10)].map(Number);
+  return Date.UTC(year ?? 0, (month ?? 1) - 1, day) / 86_400_000;
 }

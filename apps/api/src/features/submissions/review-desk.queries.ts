@@ -4,7 +4,7 @@ import type { DataSource } from 'typeorm';
 import type { z } from 'zod';
 import { readStatement } from '../../database/raw.ts';
 import { afterPosition, containing, cutPage, decodeCursor, directionOf } from '../../http/keyset.ts';
-import { daysBetween } from './next-step.rules.ts';
+import { dayNumber } from './next-step.rules.ts';
 
 type Query = z.infer<typeof reviewDeskQuery>;
 
@@ -62,21 +62,42 @@ export function findReviewDesk(
        CASE WHEN s.submitted_at IS NULL THEN 0 ELSE s.undecided_count END AS undecided,
        CASE WHEN s.submitted_at IS NULL THEN 0 ELSE s.deviations_open END AS deviationsOpen,
        s.special_count AS special, r.question_open AS questionOpen,
-       (SELECT json_group_array(u.name) FROM request_reviewers rr JOIN users u ON u.id = rr.user_id
+       (SELECT group_concat(u.name, char(10)) FROM request_reviewers rr JOIN users u ON u.id = rr.user_id
         WHERE rr.request_id = s.request_id) AS reviewers
      FROM submissions s LEFT JOIN requests r ON r.id = s.request_id LEFT JOIN organisations o ON o.id = s.supplier_id
      WHERE ${where}${after.sql} ORDER BY ${column} ${way}, s.id ${way} LIMIT ?`,
   ).all(...values, ...after.values, query.limit + 1) as Row[];
+  const today = dayNumber(now);
   return cutPage(
     rows,
     query.limit,
     query.sort,
     (row) => ({ value: row[key as SortKey], id: row.id }),
-    ({ decidedAt, reviewers, questionOpen, ...row }) => ({
-      ...row,
-      waitingDays: row.submittedAt === null || decidedAt !== null ? 0 : daysBetween(row.submittedAt, now),
-      reviewers: (JSON.parse(reviewers ?? '[]') as string[]).sort((a, b) => a.localeCompare(b)),
-      questionOpen: questionOpen === 1,
-    }),
+    (row) => itemOf(row, today),
   );
+}
+
+/** Named field by field: copying the driver's rows whole costs more than reading them. */
+function itemOf(row: Row, today: number): ReviewDeskItem {
+  const { submittedAt } = row;
+  return {
+    id: row.id,
+    requestId: row.requestId,
+    requestNumber: row.requestNumber,
+    round: row.round,
+    state: row.state,
+    supplierName: row.supplierName,
+    partNumber: row.partNumber,
+    partName: row.partName,
+    revision: row.revision,
+    dueOn: row.dueOn,
+    submittedAt,
+    waitingDays: submittedAt === null || row.decidedAt !== null ? 0 : today - dayNumber(submittedAt),
+    out: row.out,
+    undecided: row.undecided,
+    special: row.special,
+    deviationsOpen: row.deviationsOpen,
+    reviewers: row.reviewers === null ? [] : row.reviewers.split('\n').sort(),
+    questionOpen: row.questionOpen === 1,
+  };
 }
