@@ -11,15 +11,17 @@ const readings = Array.from({ length: 10 }, (_, part) =>
 );
 
 const CALLS = 200;
+/** Processor time, so that what else the machine does is not counted. */
 const once = () => {
-  const started = performance.now();
+  const before = process.cpuUsage();
   for (let call = 0; call < CALLS; call += 1) gaugeAnova(readings);
-  return (performance.now() - started) / CALLS;
+  const { user, system } = process.cpuUsage(before);
+  return (user + system) / 1000 / CALLS;
 };
 for (let round = 0; round < 5; round += 1) once();
 atMost(
   'gauge study by ANOVA, 10 parts × 3 people × 3 trials',
   median(Array.from({ length: 15 }, once)),
-  'ms',
+  'ms cpu',
   1,
 );
