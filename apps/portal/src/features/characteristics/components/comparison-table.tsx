@@ -32,6 +32,10 @@ const fieldWords: Record<string, string> = {
   geometric: 'geometric tolerance',
 };
 
+/** As a drawing writes it: a basic dimension in a frame, any other without limits in brackets. */
+const unlimited = (kind: CharacteristicResponse['kind'], nominal: string): string =>
+  kind === 'basic' ? `[${nominal}]` : `(${nominal})`;
+
 function limitsOf(row: CharacteristicResponse | null): string {
   if (!row) return '–';
   const lower = row.lowerLimit === null || row.naturalLower ? null : showDecimal(row.lowerLimit);
@@ -45,7 +49,7 @@ function limitsOf(row: CharacteristicResponse | null): string {
           ? `≥ ${lower}`
           : row.nominal === null
             ? 'no limits'
-            : `(${showDecimal(row.nominal)})`;
+            : unlimited(row.kind, showDecimal(row.nominal));
   return `${band} ${row.unit === '1' ? '' : row.unit}`.trim();
 }
 
