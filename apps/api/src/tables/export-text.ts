@@ -1,6 +1,6 @@
 /** A text cell that a spreadsheet program would run as a formula gets a quotation mark in front; numbers stay numbers. */
 export function safeText(text: string): string {
-  return /^[=+\-@\t\r\0]/.test(text) && !/^[+-]?\d+(?:\.\d+)?$/.test(text) ? `'${text}` : text;
+  return /^[=+\-@\t\r\0]/.test(text) && !/^[+-]?(?:\d+(?:\.\d*)?|\.\d+)$/.test(text) ? `'${text}` : text;
 }
 
 /** The text without the mark that `safeText` put there, so that an exported file imports unchanged. */

@@ -1,13 +1,9 @@
-import { createRequire } from 'node:module';
-import { dirname, join } from 'node:path';
-import { pathToFileURL } from 'node:url';
-import { writeFileSync } from 'node:fs';
 import type ExcelJs from 'exceljs';
 import papaparse from 'papaparse';
-import type { Response } from 'supertest';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { CharacteristicRequest } from '@trammel/shared/characteristics';
-import { signInAs, type Client } from '../../testing/sign-in.ts';
+import { signInAs } from '../../testing/sign-in.ts';
+import { download, pdfText, squeezed } from '../../testing/read-pdf.ts';
 import { bore, bossPosition, marking, PackageStory, wall } from '../../testing/package-story.ts';
 
 const flat: CharacteristicRequest = {
@@ -32,49 +28,6 @@ const critical: CharacteristicRequest = {
 let story: PackageStory;
 const submitted = () => `/api/submissions/${story.submissionId}`;
 
-function download(who: Client, path: string) {
-  return who
-    .get(path)
-    .buffer(true)
-    .parse((res, done) => {
-      const chunks: Buffer[] = [];
-      res.on('data', (chunk: Buffer) => chunks.push(chunk));
-      res.on('end', () => done(null, Buffer.concat(chunks)));
-    });
-}
-
-interface PdfPage {
-  getTextContent(options: { disableNormalization: boolean }): Promise<{ items: { str?: string }[] }>;
-}
-interface PdfJs {
-  getDocument(source: { data: Uint8Array; standardFontDataUrl: string }): {
-    promise: Promise<{ numPages: number; getPage(number: number): Promise<PdfPage> }>;
-  };
-}
-
-/** Text of each page as a reader of the file gets it: by the letters' codes, not as it was written. */
-async function textOf(answer: Response): Promise<string[]> {
-  const installed = createRequire(import.meta.url);
-  const entry = installed.resolve('pdfjs-dist/legacy/build/pdf.mjs');
-  const pdfjs = (await import(/* @vite-ignore */ pathToFileURL(entry).href)) as PdfJs;
-  const fonts = join(dirname(installed.resolve('pdfjs-dist/package.json')), 'standard_fonts/');
-  const data = new Uint8Array(answer.body as Buffer);
-  const file = await pdfjs.getDocument({ data, standardFontDataUrl: fonts }).promise;
-  const pages: string[] = [];
-  for (let number = 1; number <= file.numPages; number += 1) {
-    const content = await (await file.getPage(number)).getTextContent({ disableNormalization: true });
-    pages.push(
-      content.items
-        .map((item) => item.str ?? '')
-        .join(' ')
-        .replace(/\s+/g, ' '),
-    );
-  }
-  return pages;
-}
-
-const squeezed = (text: string) => text.replace(/\s/g, '');
-
 beforeAll(async () => {
   story = await PackageStory.begin({ closes: 'caller' });
   await story.releasePart([bore, bossPosition, wall, marking, flat, critical]);
@@ -94,7 +47,9 @@ describe('before the supplier has submitted', () => {
       const answer = await story.reviewer.get(`${submitted()}/${name}`).expect(409);
       expect(answer.body.detail).toMatch(/not submitted/);
     }
-    const pages = await textOf(await download(story.supplier, `${submitted()}/warrant.pdf`).expect(200));
+    const pages = await pdfText(
+      (await download(story.supplier, `${submitted()}/warrant.pdf`).expect(200)).body as Buffer,
+    );
     expect(pages.join(' ').match(/not signed/g)).toHaveLength(2);
     expect(pages.join(' ')).toContain('not stated');
   }, 60_000);
@@ -118,9 +73,7 @@ describe('after submission', () => {
     expect(answer.headers['content-disposition']).toMatch(
       /attachment; filename="TD-1-B-round-1-warrant\.pdf"/,
     );
-    if (process.env.REPORTS_FOLDER)
-      writeFileSync(join(process.env.REPORTS_FOLDER, 'warrant.pdf'), answer.body as Buffer);
-    const text = (await textOf(answer)).join(' ');
+    const text = (await pdfText(answer.body as Buffer)).join(' ');
     const { warrantSignature: signature } = await story.head();
     if (!signature) throw new Error('The warrant is not signed.');
     expect(text).toContain('TD-1');
@@ -141,9 +94,7 @@ describe('after submission', () => {
 
   it('prints every row with limits, figures, verdict and readings as typed, in letters of every alphabet', async () => {
     const answer = await download(story.reviewer, `${submitted()}/dimensional-results.pdf`).expect(200);
-    if (process.env.REPORTS_FOLDER)
-      writeFileSync(join(process.env.REPORTS_FOLDER, 'results.pdf'), answer.body as Buffer);
-    const pages = await textOf(answer);
+    const pages = await pdfText(answer.body as Buffer);
     const text = pages.join(' ');
     for (const part of [
       '19.00',
@@ -248,9 +199,7 @@ describe('after the disposition', () => {
     for (const name of ['warrant.pdf', 'dimensional-results.pdf']) {
       for (const who of [story.reviewer, story.supplier]) {
         const answer = await download(who, `${submitted()}/${name}`).expect(200);
-        if (process.env.REPORTS_FOLDER)
-          writeFileSync(join(process.env.REPORTS_FOLDER, `signed-${name}`), answer.body as Buffer);
-        const text = (await textOf(answer)).join(' ');
+        const text = (await pdfText(answer.body as Buffer)).join(' ');
         for (const signature of [warrantSignature, dispositionSignature]) {
           expect(text).toContain(signature?.name ?? 'unsigned');
           expect(squeezed(text)).toContain(signature?.digest ?? 'unsigned');

@@ -32,7 +32,7 @@ interface Cell {
 /** A number stays a number and shows the decimals it was typed with; one too long for the cell's precision stays text. */
 export function numberCell(text: string): Cell {
   if (text === '') return { value: null };
-  const match = /^[+-]?\d+(?:\.(\d*))?$/.exec(text);
+  const match = /^[+-]?(?=\.?\d)\d*(?:\.(\d*))?$/.exec(text);
   if (!match) return { value: safeText(text), numFmt: '@' };
   const decimals = (match[1] ?? '').length;
   const value = Number(text);
