@@ -208,7 +208,7 @@ export function ReadingImport({ submissionId, backTo }: ReadingImportProps) {
             <DataTable
               caption="First readings of the file"
               columns={columns}
-              rows={preview.sample}
+              rows={preview.sample.slice(0, 25)}
               rowId={(row) => `${row.line}-${row.balloon}-${row.piece}`}
               empty={
                 <p className="text-pencil">
