@@ -36,6 +36,7 @@ describe('position as a diameter', () => {
     expect(positionDiameter('0', '0')).toMatchObject({ text: '0', exact: true, value: 0 });
     expect(positionDiameter('1', '1')).toMatchObject({ text: '2.828' });
     expect(positionDiameter('2', '3')).toMatchObject({ text: '7.211' });
+    expect(positionDiameter('1', '3')).toMatchObject({ text: '6.325' });
   });
 
   it('takes a third deviation as a spherical zone', () => {
@@ -193,6 +194,15 @@ describe('a geometric row of one piece', () => {
     expect(judgeGeometric({ ...row, modifier: 'LMC' })).toMatchObject({
       virtualCondition: null,
       leastMaterialVirtualSize: '10.4',
+    });
+  });
+
+  it('conforms with no deviation where no tolerance is left, and states how far coordinates are beyond', () => {
+    const exact = { reading: { dx: '0', dy: '0' }, tolerance: '0' };
+    expect(judgeGeometric(exact)).toMatchObject({ verdict: 'in-tolerance' });
+    expect(judgeGeometric({ reading: { dx: '0.03', dy: '0.04' }, tolerance: '0.08' })).toMatchObject({
+      verdict: 'out-of-tolerance',
+      deviationBeyond: '0.02',
     });
   });
 
