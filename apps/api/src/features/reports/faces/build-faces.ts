@@ -39,23 +39,32 @@ const alike = new Map([
  * file: no text has to be cut where it changes alphabets. Costs a moment, so it is done once a process.
  */
 export function buildFaces(): Faces {
+  const opened = new Map<string, SourceFont>();
+  const open: Open = (file, weight) => {
+    const key = `${file} ${weight ?? ''}`;
+    let source = opened.get(key);
+    if (!source) opened.set(key, (source = openFont(file, weight)));
+    return source;
+  };
   return {
-    text: buildFace(recipes.text),
-    strong: buildFace(recipes.strong),
-    figures: buildFace(recipes.figures),
-    'strong-figures': buildFace(recipes['strong-figures']),
+    text: buildFace(recipes.text, open),
+    strong: buildFace(recipes.strong, open),
+    figures: buildFace(recipes.figures, open),
+    'strong-figures': buildFace(recipes['strong-figures'], open),
   };
 }
 
-function buildFace(recipe: Recipe): Uint8Array {
+type Open = (file: string, weight: number | null) => SourceFont;
+
+function buildFace(recipe: Recipe, open: Open): Uint8Array {
   const part = (letters: string) =>
-    openFont(
+    open(
       `${family}-${recipe.family}/files/atkinson-hyperlegible-${recipe.family}-${letters}-wght-normal.woff2`,
       recipe.weight,
     );
   const main = part('latin');
   const glyphs = new Map<number, Outline>();
-  for (const source of [main, part('latin-ext'), openFont(`${further}-${recipe.further}.ttf`, null)]) {
+  for (const source of [main, part('latin-ext'), open(`${further}-${recipe.further}.ttf`, null)]) {
     addLetters(glyphs, source);
   }
   for (const [sign, letter] of alike) {

@@ -33,12 +33,18 @@ export function openFont(file: string, weight: number | null): SourceFont {
   const scale = 1000 / font.unitsPerEm;
   const scaled = (contour: readonly OutlinePoint[]): Contour =>
     contour.map(({ x, y, onCurve }) => ({ x: Math.round(x * scale), y: Math.round(y * scale), onCurve }));
+  const outlines = new Map<number, Outline>();
+  const draw = (codePoint: number): Outline => {
+    const drawn = drawGlyph({ font, movements }, font.glyphForCodePoint(codePoint).id, 0);
+    return { advance: Math.round(drawn.advance * scale), contours: drawn.contours.map(scaled) };
+  };
   return {
     font,
     characters: font.characterSet,
     outlineOf: (codePoint) => {
-      const drawn = drawGlyph({ font, movements }, font.glyphForCodePoint(codePoint).id, 0);
-      return { advance: Math.round(drawn.advance * scale), contours: drawn.contours.map(scaled) };
+      let outline = outlines.get(codePoint);
+      if (!outline) outlines.set(codePoint, (outline = draw(codePoint)));
+      return outline;
     },
   };
 }

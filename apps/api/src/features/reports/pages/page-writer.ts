@@ -39,9 +39,12 @@ interface OpenDocument {
 interface Face {
   readonly font: EmbeddedFont;
   readonly letters: Map<string, Letter>;
+  /** Texts lately written: a table says the same words on every row. */
+  readonly texts: Map<string, Letter>;
 }
+const keptTexts = 4000;
 
-const number = (value: number) => String(Math.round(value * 100) / 100);
+const number = (value: number) => String(Math.round(value * 10) / 10);
 
 /**
  * Writes the marks of a page itself and leaves fonts, compression and structure of the file to pdfkit: a results table
@@ -57,6 +60,8 @@ export class PageWriter {
   private readonly finished: Promise<Uint8Array>;
   private marks: string[] = [];
   private colour: Colour | null = null;
+  private font = '';
+  private isInText = false;
 
   constructor(faces: Faces, { title, layout }: { title: string; layout: 'portrait' | 'landscape' }) {
     this.document = new PDFDocument({
@@ -78,7 +83,7 @@ export class PageWriter {
     });
     for (const name of faceNames) {
       this.document.font(Buffer.from(faces[name]));
-      this.faces.set(name, { font: this.open()._font, letters: new Map() });
+      this.faces.set(name, { font: this.open()._font, letters: new Map(), texts: new Map() });
     }
   }
 
@@ -107,20 +112,19 @@ export class PageWriter {
   }
 
   widthOf(text: string, { face, size }: TextStyle): number {
-    let sum = 0;
-    for (const letter of text) sum += this.letter(face, letter).advance;
-    return (sum * size) / 1000;
+    return (this.encoded(face, text).advance * size) / 1000;
   }
 
   text(x: number, y: number, text: string, style: TextStyle): void {
-    let codes = '';
-    for (const letter of text) codes += this.letter(style.face, letter).code;
-    if (codes === '') return;
+    const { code } = this.encoded(style.face, text);
+    if (code === '') return;
     this.fill(style.colour ?? 'graphite');
-    const { font } = this.face(style.face);
-    this.marks.push(
-      `BT /${font.id} ${number(style.size)} Tf 1 0 0 -1 ${number(x)} ${number(y)} Tm <${codes}> Tj ET`,
-    );
+    if (!this.isInText) this.marks.push('BT');
+    this.isInText = true;
+    const font = `/${this.face(style.face).font.id} ${number(style.size)} Tf`;
+    if (font !== this.font) this.marks.push(font);
+    this.font = font;
+    this.marks.push(`1 0 0 -1 ${number(x)} ${number(y)} Tm <${code}> Tj`);
   }
 
   textRight(right: number, y: number, text: string, style: TextStyle): void {
@@ -138,11 +142,13 @@ export class PageWriter {
 
   /** Path operators that end in a stroke. */
   path(operators: string, colour: Colour, thickness: number): void {
+    this.endText();
     this.marks.push(`${colours[colour]} RG ${number(thickness)} w ${operators}`);
   }
 
   /** Path operators that end in a filling. */
   area(operators: string, colour: Colour): void {
+    this.endText();
     this.fill(colour);
     this.marks.push(operators);
   }
@@ -187,15 +193,33 @@ export class PageWriter {
     return face;
   }
 
-  private letter(name: FaceName, letter: string): Letter {
-    const { font, letters } = this.face(name);
-    let known = letters.get(letter);
-    if (!known) {
-      const [codes, positions] = font.encode(letter);
-      const advance = positions.reduce((sum, position) => sum + position.advanceWidth, 0);
-      letters.set(letter, (known = { code: codes.join(''), advance }));
+  private encoded(name: FaceName, text: string): Letter {
+    const face = this.face(name);
+    let known = face.texts.get(text);
+    if (known) return known;
+    let code = '';
+    let advance = 0;
+    for (const letter of text) {
+      const one = face.letters.get(letter) ?? this.addLetter(face, letter);
+      code += one.code;
+      advance += one.advance;
     }
+    if (face.texts.size >= keptTexts) face.texts.clear();
+    face.texts.set(text, (known = { code, advance }));
     return known;
+  }
+
+  private addLetter({ font, letters }: Face, letter: string): Letter {
+    const [codes, positions] = font.encode(letter);
+    const advance = positions.reduce((sum, position) => sum + position.advanceWidth, 0);
+    const added = { code: codes.join(''), advance };
+    letters.set(letter, added);
+    return added;
+  }
+
+  private endText(): void {
+    if (this.isInText) this.marks.push('ET');
+    this.isInText = false;
   }
 
   private fill(colour: Colour): void {
@@ -206,12 +230,14 @@ export class PageWriter {
 
   private beginMarks(): void {
     this.colour = null;
+    this.font = '';
     const { page } = this.open();
     for (const { font } of this.faces.values()) page.fonts[font.id] ??= font.ref();
   }
 
   private flush(): void {
-    if (this.marks.length > 0) this.document.addContent(this.marks.join('\n'));
+    this.endText();
+    if (this.marks.length > 0) this.document.addContent(Buffer.from(`${this.marks.join('\n')}\n`, 'latin1'));
     this.marks = [];
   }
 }
