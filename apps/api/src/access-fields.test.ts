@@ -49,7 +49,7 @@ beforeAll(async () => {
     })
     .expect(200);
   expect((await story.sign()).status).toBe(201);
-}, 60_000);
+}, 120_000);
 afterAll(() => story.app.close());
 
 /** Every address that answers with 200 for this person, of all that the product has, and what it answers. */
