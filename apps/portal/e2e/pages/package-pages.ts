@@ -33,17 +33,12 @@ export class PackagePages {
       .click();
   }
 
-  async addPieces(stream: string, labels: string, madeOn: string, lot: string): Promise<void> {
-    await this.page
-      .getByRole('button', { name: /^Add .*pieces$/ })
-      .first()
-      .click();
+  async datePiece(piece: string, madeOn: string, lot: string): Promise<void> {
+    await this.page.getByRole('button', { name: `Change piece ${piece}` }).click();
     const dialog = this.page.getByRole('dialog');
-    await dialog.getByLabel('Stream').selectOption({ label: stream });
-    await dialog.getByLabel('Labels or serial numbers').fill(labels);
     await dialog.getByLabel(/^Made on/).fill(madeOn);
     await dialog.getByLabel(/^Lot or heat/).fill(lot);
-    await dialog.getByRole('button', { name: /^Add \d+ pieces$/ }).click();
+    await dialog.getByRole('button', { name: /^Save/ }).click();
     await dialog.waitFor({ state: 'detached' });
   }
 

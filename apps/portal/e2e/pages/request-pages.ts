@@ -38,6 +38,9 @@ export class RequestPages {
     await choose(page, 'Site that makes the part', request.site);
     await choose(page, 'Submission level', request.level);
     await page.getByText(/^Elements: /).click();
+    // Only the warrant and the customer's own element are asked for.
+    for (const demand of await page.getByLabel(/^Demand for (?!.*warrant)/i).all())
+      await demand.selectOption('not-required');
     await page.getByLabel('Another element').fill(request.ownElement);
     await page.getByRole('button', { name: 'Add element' }).click();
     await choose(page, 'Kind of stream', request.streamKind);

@@ -54,8 +54,8 @@ export class ReviewPages {
 
   async limit(facts: { until: string; pieces: string; containment: string }): Promise<void> {
     await this.page.getByLabel('Ends on').fill(facts.until);
-    await this.page.getByLabel('Number of pieces').fill(facts.pieces);
-    await this.page.getByLabel('Containment').fill(facts.containment);
+    await this.page.getByRole('textbox', { name: 'Number of pieces' }).fill(facts.pieces);
+    await this.page.getByRole('textbox', { name: 'Containment' }).fill(facts.containment);
   }
 
   async addCondition(text: string, owner: string, due: string): Promise<void> {

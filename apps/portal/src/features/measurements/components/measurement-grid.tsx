@@ -195,7 +195,7 @@ export function MeasurementGrid({
       aria-multiselectable="true"
       aria-readonly={!editable}
       aria-activedescendant={cellId(selection.active.row, selection.active.column)}
-      className="relative h-[min(70vh,46rem)] overflow-auto border border-rule bg-sheet text-[13px] focus-visible:outline-2 focus-visible:outline-marking"
+      className="relative max-h-[min(70vh,46rem)] overflow-auto border border-rule bg-sheet text-[13px] focus-visible:outline-2 focus-visible:outline-marking"
       onKeyDown={onKeyDown}
       onCopy={(event) => {
         if (editing !== null) return;

@@ -42,7 +42,7 @@ export function ReviewList({ rows, selectedId, onSelect, onEnd }: ReviewListProp
       aria-label="Characteristics"
       tabIndex={0}
       aria-activedescendant={selectedId === null ? undefined : `row-${selectedId}`}
-      className="h-[min(74vh,50rem)] overflow-y-auto border border-rule bg-sheet"
+      className="max-h-[min(74vh,50rem)] overflow-y-auto border border-rule bg-sheet"
     >
       <div className="relative" style={{ height: list.getTotalSize() }}>
         {items.map((item) => {
