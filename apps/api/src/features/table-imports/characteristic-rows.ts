@@ -1,3 +1,4 @@
+// Longer than most: each cell of a row has its reader here, so that a refusal is found by its column.
 import { isUndetermined, type ToleranceLimits } from '@trammel/metrology/conformance';
 import { parseDecimal } from '@trammel/metrology/decimal';
 import { statedLimits } from '@trammel/metrology/tolerance-notation';

@@ -1,3 +1,4 @@
+// Longer than most: preview, second preview and confirmation share what was shown, and belong side by side.
 import { randomUUID } from 'node:crypto';
 import type {
   confirmReadingImportRequest,

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { commandOf } from './table-keys.ts';
 import {
   readBlock,
   reduceTable,
