@@ -160,7 +160,7 @@ function DeliveryForm({ lineId }: { lineId: string }) {
       <div className="flex flex-wrap items-end gap-3">
         <TextField {...form.field('quantity')} label="Pieces" inputMode="numeric" mono />
         <TextField {...form.field('note')} label="Delivery note" optional />
-        <Button type="submit" busy={form.busy}>
+        <Button type="submit" weight="primary" busy={form.busy}>
           Count as received
         </Button>
       </div>

@@ -132,7 +132,7 @@ export function DeviationForm({ submissionId, deviation, onDone, onCancel }: Dev
         <DateField {...form.field('untilOn')} label="Until" optional />
       </div>
       <div className="flex flex-wrap gap-2">
-        <Button type="submit" busy={form.busy}>
+        <Button type="submit" weight="primary" busy={form.busy}>
           {deviation ? 'Save changes' : 'Send to the customer'}
         </Button>
         <Button weight="plain" onClick={onCancel}>

@@ -37,7 +37,9 @@ export function DeviationsPage({ submissionId, streamNames, mayAsk }: Deviations
       )}
       {mayAsk && form === null && (
         <div>
-          <Button onClick={() => setForm({ id: null })}>Ask for a deviation</Button>
+          <Button weight="primary" onClick={() => setForm({ id: null })}>
+            Ask for a deviation
+          </Button>
         </div>
       )}
       {data.items.length === 0 && form === null && (

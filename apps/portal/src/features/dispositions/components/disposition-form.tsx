@@ -182,7 +182,7 @@ export function DispositionForm({ submissionId, name }: DispositionFormProps) {
           type="password"
           autoComplete="current-password"
         />
-        <Button type="submit" busy={form.busy} disabled={blockers.length > 0}>
+        <Button type="submit" weight="primary" busy={form.busy} disabled={blockers.length > 0}>
           Sign: {outcomeWords[outcome].toLowerCase()}
         </Button>
       </div>

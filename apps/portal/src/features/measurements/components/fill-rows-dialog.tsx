@@ -67,6 +67,7 @@ export function FillRowsDialog({ submissionId, model, shownIds, open, onClose }:
             Cancel
           </Button>
           <Button
+            weight="primary"
             busy={busy}
             disabled={rows.length === 0 || (gaugeId === '' && measuredOn === '')}
             onClick={() => void fill()}

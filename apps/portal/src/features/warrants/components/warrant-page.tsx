@@ -63,7 +63,7 @@ export function WarrantPage({ submissionId, name, disposition }: WarrantPageProp
       />
       <div className="no-print flex flex-wrap gap-2">
         {warrant.abilities.sign && (
-          <Button disabled={warrant.blockers.length > 0} onClick={() => setSigning(true)}>
+          <Button weight="primary" disabled={warrant.blockers.length > 0} onClick={() => setSigning(true)}>
             Sign and submit
           </Button>
         )}
@@ -175,7 +175,7 @@ function SignDialog({
       title={`Sign the warrant of ${name}`}
       footer={
         <>
-          <Button busy={busy} disabled={password === ''} onClick={() => void sign()}>
+          <Button weight="primary" busy={busy} disabled={password === ''} onClick={() => void sign()}>
             Sign and submit
           </Button>
           <Button weight="plain" onClick={onClose}>
