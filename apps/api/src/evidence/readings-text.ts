@@ -1,6 +1,12 @@
 /** Readings of one row as they are stored: exact texts by slot, one a line; an empty line is a piece not measured. */
 export function decodeReadings(stored: string): (string | null)[] {
-  return stored === '' ? [] : stored.split('\n').map((text) => (text === '' ? null : text));
+  if (stored === '') return [];
+  const texts: (string | null)[] = stored.split('\n');
+  // Most rows are whole; only a row with an empty line is walked.
+  if (stored.startsWith('\n') || stored.includes('\n\n')) {
+    for (let slot = 0; slot < texts.length; slot += 1) if (texts[slot] === '') texts[slot] = null;
+  }
+  return texts;
 }
 
 export function encodeReadings(texts: readonly (string | null)[]): string {

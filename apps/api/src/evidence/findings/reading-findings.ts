@@ -3,6 +3,7 @@ import type { CheckInputs } from '../check-inputs.ts';
 import { hasVerdict, takesAttribute } from '../characteristic-facts.ts';
 import { requiredPieces } from '../package-context.ts';
 import type { JudgedRow } from '../row-checks.ts';
+import { endsInFigure } from '../reading-entry.ts';
 import { onPackage, onPiece, onRow, onStream, plural } from './finding.ts';
 
 /** What is missing or looks wrong in the sample itself: R21, R22, R23, R26, R27. */
@@ -14,7 +15,7 @@ export function readingFindings(inputs: CheckInputs, rows: readonly JudgedRow[])
     ...shortSamples(inputs),
     ...missingReadings(inputs, rows),
     ...tooFewDecimals(inputs, rows),
-    ...copiedAcrossStreams(rows),
+    ...copiedAcrossStreams(inputs, rows),
     ...sortedReadings(rows),
   ];
 }
@@ -117,19 +118,19 @@ function missingReadings(inputs: CheckInputs, rows: readonly JudgedRow[]): Findi
   return found;
 }
 
-const decimalsOf = (text: string) => {
+/** Digits behind the point of a bare number; a text with a unit or a word behind it is not looked at. */
+function decimalsOf(text: string): number {
+  if (!endsInFigure(text)) return Infinity;
   const point = text.indexOf('.');
-  return point < 0 ? 0 : (/^\d*/.exec(text.slice(point + 1))?.[0].length ?? 0);
-};
+  return point < 0 ? 0 : text.length - point - 1;
+}
 
 function tooFewDecimals(inputs: CheckInputs, rows: readonly JudgedRow[]): Finding[] {
   const found: Finding[] = [];
   for (const row of rows) {
     const { facts, stream, texts } = row;
     if (stream.blocked || !hasVerdict(facts) || facts.decimals === 0 || takesAttribute(facts)) continue;
-    const coarse = texts.filter(
-      (text) => text !== null && decimalsOf(text) < facts.decimals && !/[^\d.+\-−]/u.test(text),
-    );
+    const coarse = texts.filter((text) => text !== null && decimalsOf(text) < facts.decimals);
     if (coarse.length === 0) continue;
     found.push(
       onRow(row, {
@@ -145,14 +146,14 @@ function tooFewDecimals(inputs: CheckInputs, rows: readonly JudgedRow[]): Findin
 }
 
 /** The same figures in the same order in two streams: possible, but more often a copied block (R27). */
-function copiedAcrossStreams(rows: readonly JudgedRow[]): Finding[] {
+function copiedAcrossStreams(inputs: CheckInputs, rows: readonly JudgedRow[]): Finding[] {
   const found: Finding[] = [];
+  if (inputs.streams.length < 2) return found;
   const seen = new Map<string, JudgedRow>();
   for (const row of rows) {
-    if (row.stream.blocked || takesAttribute(row.facts)) continue;
-    const texts = row.texts.filter((text) => text !== null);
-    if (texts.length < 3 || new Set(texts).size === 1) continue;
-    const key = `${row.facts.id}\n${texts.join('\n')}`;
+    if (row.stream.blocked || takesAttribute(row.facts) || row.checked.n < 3) continue;
+    if (row.checked.minimum === row.checked.maximum) continue;
+    const key = `${row.facts.id}\n${row.stored.readings}`;
     const twin = seen.get(key);
     if (!twin) {
       seen.set(key, row);
@@ -163,7 +164,7 @@ function copiedAcrossStreams(rows: readonly JudgedRow[]): Finding[] {
         rule: 'R27',
         weight: 'reviewer-decides',
         title: 'Same readings in two streams',
-        detail: `Balloon ${row.facts.balloon}: ${row.stream.name} and ${twin.stream.name} have the same ${texts.length} readings in the same order.${row.stored.note === '' ? '' : ` Note: ${row.stored.note}`}`,
+        detail: `Balloon ${row.facts.balloon}: ${row.stream.name} and ${twin.stream.name} have the same ${row.checked.n} readings in the same order.${row.stored.note === '' ? '' : ` Note: ${row.stored.note}`}`,
         remedy: 'Check that the block was not pasted twice; where it is right, say why in the row’s note.',
       }),
     );
@@ -175,22 +176,39 @@ function copiedAcrossStreams(rows: readonly JudgedRow[]): Finding[] {
 function sortedReadings(rows: readonly JudgedRow[]): Finding[] {
   const found: Finding[] = [];
   for (const row of rows) {
-    if (row.stream.blocked) continue;
-    const values = row.texts.filter((text) => text !== null).map(Number);
-    if (values.length < 10 || new Set(values).size < 5 || values.some(Number.isNaN)) continue;
-    const rising = values.every((value, index) => index === 0 || value >= (values[index - 1] ?? value));
-    const falling = values.every((value, index) => index === 0 || value <= (values[index - 1] ?? value));
-    if (!rising && !falling) continue;
+    if (row.stream.blocked || row.checked.n < 10) continue;
+    const order = orderOf(row.texts);
+    if (order === null) continue;
     found.push(
       onRow(row, {
         rule: 'R27',
         weight: 'reviewer-decides',
         title: 'Readings are in order of size',
-        detail: `Balloon ${row.facts.balloon}, ${row.stream.name}: ${values.length} readings ${rising ? 'rise' : 'fall'} from piece to piece.`,
+        detail: `Balloon ${row.facts.balloon}, ${row.stream.name}: ${row.checked.n} readings ${order} from piece to piece.`,
         remedy:
           'Enter the readings in the order of production; where the process truly drifts, say so in the row’s note.',
       }),
     );
   }
   return found;
+}
+
+/** Whether readings only rise or only fall over at least five different values; most rows answer after a few. */
+function orderOf(texts: readonly (string | null)[]): 'rise' | 'fall' | null {
+  let [rising, falling, steps] = [true, true, 0];
+  let before: number | null = null;
+  for (const text of texts) {
+    if (text === null) continue;
+    const value = Number(text);
+    if (Number.isNaN(value)) return null;
+    if (before !== null && value !== before) {
+      if (value > before) falling = false;
+      else rising = false;
+      steps += 1;
+      if (!rising && !falling) return null;
+    }
+    before = value;
+  }
+  if (steps < 4) return null;
+  return rising ? 'rise' : 'fall';
 }
