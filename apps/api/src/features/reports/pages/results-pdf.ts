@@ -31,7 +31,7 @@ const columns: readonly Column[] = [
     style: { face: 'strong-figures', size: 8 },
     value: ({ facts }) => facts.balloon,
   },
-  { title: 'Description', width: 152, style: words, value: ({ facts }) => facts.description },
+  { title: 'Description', width: 145, style: words, value: ({ facts }) => facts.description },
   {
     title: 'Stream',
     width: 62,
@@ -50,7 +50,7 @@ const columns: readonly Column[] = [
   { title: 'Class', width: 52, style: words, value: ({ facts }) => classWords[facts.class] },
   {
     title: 'n',
-    width: 38,
+    width: 45,
     style: figures,
     right: true,
     value: ({ checked }) =>
