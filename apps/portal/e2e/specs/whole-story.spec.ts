@@ -246,7 +246,7 @@ describe.sequential('from the request to the approval, by three people', () => {
       await review.press('a');
       await expect.poll(() => review.marked.textContent()).toBe(marked);
     }
-    await review.acceptElements([element]);
+    await review.acceptElements([element, 'Part submission warrant']);
   });
 
   step('signs an interim approval with a condition', async () => {
@@ -306,7 +306,7 @@ describe.sequential('from the request to the approval, by three people', () => {
     await review.select('2');
     await review.press('a');
     await expect.poll(() => review.marked.textContent()).toBe('4 of 4 marked');
-    await review.acceptElements([element]);
+    await review.acceptElements([element, 'Part submission warrant']);
     await packages.openTab('Disposition');
     await review.chooseOutcome('Approved');
     await review.sign(password);
