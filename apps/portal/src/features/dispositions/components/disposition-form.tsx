@@ -1,4 +1,4 @@
-import { useQueryClient, useSuspenseQuery } from '@tanstack/react-query';
+import { hashKey, useQueryClient, useSuspenseQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import {
   outcomes,
@@ -97,7 +97,12 @@ export function DispositionForm({ submissionId, name }: DispositionFormProps) {
         throw error;
       }
       showToast({ text: `${name}: ${outcomeWords[body.outcome].toLowerCase()}, signed` });
-      await client.invalidateQueries({ queryKey: ['submission', submissionId] });
+      // Once signed there is no draft any more: asking for it again would be refused.
+      const gone = hashKey(draftQuery(submissionId).queryKey);
+      await client.invalidateQueries({
+        queryKey: ['submission', submissionId],
+        predicate: (query) => query.queryHash !== gone,
+      });
     },
   });
   const { outcome } = form.values;
