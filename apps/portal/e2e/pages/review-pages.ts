@@ -25,6 +25,20 @@ export class ReviewPages {
     await this.page.keyboard.press('d');
   }
 
+  /** How many points of the page shown are dark: none as long as nothing is drawn. */
+  inkOnDrawing(): Promise<number> {
+    return this.drawing.first().evaluate((element) => {
+      const canvas = element as HTMLCanvasElement;
+      const { data } = canvas.getContext('2d')?.getImageData(0, 0, canvas.width, canvas.height) ?? {
+        data: [],
+      };
+      let dark = 0;
+      for (let at = 0; at < data.length; at += 4)
+        if ((data[at] ?? 255) < 128 && (data[at + 3] ?? 0) > 128) dark += 1;
+      return dark;
+    });
+  }
+
   async select(balloon: string): Promise<void> {
     await this.page
       .getByRole('option')

@@ -3,6 +3,7 @@ import { join } from 'node:path';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { newVisitor, openBrowser, shots, signIn, type Visitor } from '../fixtures.ts';
+import { ReviewPages } from '../pages/review-pages.ts';
 import { findPlaces, type Places } from '../places.ts';
 
 const standards = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
@@ -121,6 +122,24 @@ describe('every page, in light and dark, wide and narrow', () => {
     }
     const seen = faults().filter((fault) => person !== null || !expected.test(fault));
     expect({ found, seen }).toEqual({ found: [], seen: [] });
+  });
+});
+
+describe('the drawing beside the review', () => {
+  it('is drawn from the demonstration under the content policy', async () => {
+    const browser = await openBrowser();
+    try {
+      const { page, faults, context } = await signIn(await newVisitor(browser), reviewer);
+      const { bracket } = await findPlaces(context.request);
+      await page.goto(`/submissions/${bracket.submitted}/review?drawing=yes`);
+      const review = new ReviewPages(page);
+      await review.drawing.first().waitFor();
+      await expect.poll(() => review.inkOnDrawing(), { timeout: 20_000 }).toBeGreaterThan(1000);
+      await page.screenshot({ path: join(shots, 'review-drawing-1280-light.png'), fullPage: true });
+      expect(faults()).toEqual([]);
+    } finally {
+      await browser.close();
+    }
   });
 });
 

@@ -227,6 +227,7 @@ describe.sequential('from the request to the approval, by three people', () => {
     await review.marked.waitFor();
     await review.showDrawing();
     await review.drawing.first().waitFor();
+    await expect.poll(() => review.inkOnDrawing(), { timeout: 20_000 }).toBeGreaterThan(100);
     await packages.openTab('Deviations');
     await packages.grantDeviation('Depth of the groove is not functional above 1.88.');
     await packages.granted.waitFor();

@@ -103,13 +103,13 @@ const ListRow = memo(function ListRow({ row, top, index, count, selected, onSele
         {facts.balloon}
       </span>
       <span className="min-w-0 leading-4">
-        <span className="block truncate">
-          {facts.description}
+        <span className="block truncate">{facts.description}</span>
+        <span className="block truncate text-[12px] text-pencil">
+          <span className="figures">{limitsInWords(facts)}</span>
           {row.change !== null && row.change !== 'same' && (
             <span className="ml-2 text-plum">{changeWords[row.change]}</span>
           )}
         </span>
-        <span className="figures block truncate text-[12px] text-pencil">{limitsInWords(facts)}</span>
       </span>
       <Beam name={`Balloon ${facts.balloon}`} decorative className="hidden w-36 sm:block" {...beam} />
       <span className="hidden sm:block">

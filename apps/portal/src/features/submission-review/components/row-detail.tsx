@@ -44,7 +44,7 @@ export function RowDetail({ row, streams, pieces, deviationsHref, decision }: Ro
           .join(', ')}
       </p>
       {facts.class === 'safety-regulatory' && <SafetyCaution />}
-      <div className="flex flex-col divide-y divide-rule border-y border-rule">
+      <div className="flex flex-col divide-y divide-rule border-t border-rule">
         {streams.map((stream) => (
           <StreamResult
             key={stream.id}
