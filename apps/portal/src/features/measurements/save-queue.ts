@@ -17,6 +17,7 @@ export class SaveQueue {
   failure: unknown = null;
   private timer: ReturnType<typeof setTimeout> | undefined;
   private running = false;
+  private sent: Promise<void> = Promise.resolve();
   private readonly listeners = new Set<() => void>();
   private readonly unsubscribe: () => void;
 
@@ -43,13 +44,18 @@ export class SaveQueue {
 
   flush = () => {
     clearTimeout(this.timer);
-    void this.send(false);
+    this.send(false);
   };
 
-  stop(): void {
+  /** Sends what is left. Answers whether anything was on its way, so that other pages may ask anew. */
+  async stop(): Promise<boolean> {
     clearTimeout(this.timer);
     this.unsubscribe();
-    if (this.model.unsaved().length > 0) void this.send(true);
+    const pending = this.running || this.model.unsaved().length > 0;
+    await this.sent;
+    this.send(true);
+    await this.sent;
+    return pending;
   }
 
   private noteChange(): void {
@@ -66,12 +72,16 @@ export class SaveQueue {
     this.timer = setTimeout(this.flush, settleMs);
   }
 
-  private async send(keepalive: boolean): Promise<void> {
+  private send(keepalive: boolean): void {
     if (this.running) return;
     const changes = this.model.unsaved();
     if (changes.length === 0) return;
     this.running = true;
     this.become('saving');
+    this.sent = this.deliver(changes, keepalive);
+  }
+
+  private async deliver(changes: PendingChange[], keepalive: boolean): Promise<void> {
     try {
       const answer = await saveReadings(this.submissionId, { changes }, keepalive);
       this.running = false;

@@ -55,7 +55,8 @@ export function MeasurementSheet({ submissionId, sheet, importHref, onSaved }: M
   const state = useSyncExternalStore(queue.subscribe, queue.current);
   const version = useSyncExternalStore(model.subscribe, model.version);
 
-  useEffect(() => () => queue.stop(), [queue]);
+  // Whoever leaves right after typing finds head and findings as they are once the last reading has arrived.
+  useEffect(() => () => void queue.stop().then((pending) => pending && onSaved()), [queue, onSaved]);
   useEffect(() => {
     if (state === 'saved' && version > 0) onSaved();
   }, [state, version, onSaved]);
