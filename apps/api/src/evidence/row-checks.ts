@@ -9,6 +9,7 @@ import { overallIndex } from './overall-index.ts';
 import { limitCompiler, requiredPieces, type Stream } from './package-context.ts';
 import { evaluateRow } from './evaluate-row.ts';
 import { sizeBalloonOf } from './characteristic-facts.ts';
+import { habitsOf, type ReadingHabits } from './reading-habits.ts';
 import { decodeReadings } from './readings-text.ts';
 import { emptyRow, type StoredRow } from './stored-row.ts';
 
@@ -17,8 +18,9 @@ export interface JudgedRow {
   readonly facts: CharacteristicFacts;
   readonly stream: Stream;
   readonly stored: StoredRow;
-  /** Exact texts by slot. */
-  readonly texts: readonly (string | null)[];
+  /** Exact texts by slot, read when asked for: kept for every row they would cost more than judging them. */
+  readonly texts: () => readonly (string | null)[];
+  readonly habits: ReadingHabits;
   readonly marks: string;
   readonly checked: CheckedRow;
 }
@@ -26,13 +28,8 @@ export interface JudgedRow {
 /** Judges every characteristic of every stream afresh from the stored texts; what was stored as verdict is not trusted. */
 export function judgeRows(inputs: CheckInputs): JudgedRow[] {
   const stored = new Map(inputs.rows.map((row) => [`${row.characteristicId} ${row.streamId}`, row]));
-  const texts = new Map<string, readonly (string | null)[]>();
-  const textsOf = (facts: CharacteristicFacts, stream: Stream) => {
-    const key = `${facts.id} ${stream.id}`;
-    let found = texts.get(key);
-    if (!found) texts.set(key, (found = decodeReadings(stored.get(key)?.readings ?? '')));
-    return found;
-  };
+  const textsOf = (facts: CharacteristicFacts, stream: Stream) =>
+    decodeReadings(stored.get(`${facts.id} ${stream.id}`)?.readings ?? '');
   const compile = limitCompiler(inputs.rules);
   const judged: JudgedRow[] = [];
   for (const facts of inputs.characteristics.list) {
@@ -59,7 +56,8 @@ export function judgeRows(inputs: CheckInputs): JudgedRow[] {
         facts,
         stream,
         stored: row,
-        texts: own,
+        texts: () => decodeReadings(row.readings),
+        habits: habitsOf(own, facts),
         marks,
         checked: {
           characteristicId: facts.id,

@@ -3,7 +3,6 @@ import type { CheckInputs } from '../check-inputs.ts';
 import { hasVerdict, takesAttribute } from '../characteristic-facts.ts';
 import { requiredPieces } from '../package-context.ts';
 import type { JudgedRow } from '../row-checks.ts';
-import { endsInFigure } from '../reading-entry.ts';
 import { onPackage, onPiece, onRow, onStream, plural } from './finding.ts';
 
 /** What is missing or looks wrong in the sample itself: R21, R22, R23, R26, R27. */
@@ -14,7 +13,7 @@ export function readingFindings(inputs: CheckInputs, rows: readonly JudgedRow[])
     ...streamFindings(inputs, open.length),
     ...shortSamples(inputs),
     ...missingReadings(inputs, rows),
-    ...tooFewDecimals(inputs, rows),
+    ...tooFewDecimals(rows),
     ...copiedAcrossStreams(inputs, rows),
     ...sortedReadings(rows),
   ];
@@ -118,26 +117,18 @@ function missingReadings(inputs: CheckInputs, rows: readonly JudgedRow[]): Findi
   return found;
 }
 
-/** Digits behind the point of a bare number; a text with a unit or a word behind it is not looked at. */
-function decimalsOf(text: string): number {
-  if (!endsInFigure(text)) return Infinity;
-  const point = text.indexOf('.');
-  return point < 0 ? 0 : text.length - point - 1;
-}
-
-function tooFewDecimals(inputs: CheckInputs, rows: readonly JudgedRow[]): Finding[] {
+function tooFewDecimals(rows: readonly JudgedRow[]): Finding[] {
   const found: Finding[] = [];
   for (const row of rows) {
-    const { facts, stream, texts } = row;
-    if (stream.blocked || !hasVerdict(facts) || facts.decimals === 0 || takesAttribute(facts)) continue;
-    const coarse = texts.filter((text) => text !== null && decimalsOf(text) < facts.decimals);
-    if (coarse.length === 0) continue;
+    const { facts, stream } = row;
+    const { coarse } = row.habits;
+    if (stream.blocked || coarse === null) continue;
     found.push(
       onRow(row, {
         rule: 'R21',
         weight: 'reviewer-decides',
         title: 'Too few decimals',
-        detail: `Balloon ${facts.balloon}, ${stream.name}: ${plural(coarse.length, 'reading')} with fewer decimals than the drawing’s ${facts.decimals}, such as ${coarse[0] ?? ''}.`,
+        detail: `Balloon ${facts.balloon}, ${stream.name}: ${plural(coarse.count, 'reading')} with fewer decimals than the drawing’s ${facts.decimals}, such as ${coarse.first}.`,
         remedy: 'Enter the readings with the digits the gauge shows.',
       }),
     );
@@ -176,9 +167,8 @@ function copiedAcrossStreams(inputs: CheckInputs, rows: readonly JudgedRow[]): F
 function sortedReadings(rows: readonly JudgedRow[]): Finding[] {
   const found: Finding[] = [];
   for (const row of rows) {
-    if (row.stream.blocked || row.checked.n < 10) continue;
-    const order = orderOf(row.texts);
-    if (order === null) continue;
+    const { order } = row.habits;
+    if (row.stream.blocked || order === null) continue;
     found.push(
       onRow(row, {
         rule: 'R27',
@@ -191,24 +181,4 @@ function sortedReadings(rows: readonly JudgedRow[]): Finding[] {
     );
   }
   return found;
-}
-
-/** Whether readings only rise or only fall over at least five different values; most rows answer after a few. */
-function orderOf(texts: readonly (string | null)[]): 'rise' | 'fall' | null {
-  let [rising, falling, steps] = [true, true, 0];
-  let before: number | null = null;
-  for (const text of texts) {
-    if (text === null) continue;
-    const value = Number(text);
-    if (Number.isNaN(value)) return null;
-    if (before !== null && value !== before) {
-      if (value > before) falling = false;
-      else rising = false;
-      steps += 1;
-      if (!rising && !falling) return null;
-    }
-    before = value;
-  }
-  if (steps < 4) return null;
-  return rising ? 'rise' : 'fall';
 }

@@ -38,7 +38,9 @@ function outOfTolerance(inputs: CheckInputs, row: JudgedRow): Finding {
       (deviation.state === 'sent' || deviation.state === 'granted') &&
       (deviation.streamIds.length === 0 || deviation.streamIds.includes(stream.id)),
   );
-  const covering = asked.find((deviation) => deviationCovers(deviation, facts, outReadings(row)));
+  const covering = asked.find((deviation) =>
+    deviationCovers(deviation, facts, outReadings({ ...row, texts: row.texts() })),
+  );
   const what = `Balloon ${facts.balloon} (${facts.description}), ${stream.name}: ${plural(checked.outCount, 'piece')} of ${checked.n} outside ${limitsInWords(row)}.`;
   if (covering) {
     return onRow(row, {

@@ -41,9 +41,10 @@ export function reportRows({
   );
   return judgeRows(inputs).map(({ facts, stream, stored: row, texts, marks, checked }) => {
     const shown = official.get(key(checked)) ?? checked;
+    const read = texts();
     const listed = (pieces.get(stream.id) ?? []).map(({ label, slot }) => ({
       piece: label,
-      text: texts[slot] ?? null,
+      text: read[slot] ?? null,
       verdict: verdictOfMark(marks[slot]),
     }));
     const measured = listed.filter((reading) => reading.text !== null).length;
