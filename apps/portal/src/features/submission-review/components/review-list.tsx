@@ -87,7 +87,7 @@ const ListRow = memo(function ListRow({ row, top, index, count, selected, onSele
       aria-posinset={index + 1}
       aria-setsize={count}
       className={cn(
-        'absolute inset-x-0 grid cursor-pointer grid-cols-[2.5rem_minmax(0,1fr)_auto] items-center gap-x-2 border-b border-rule px-2 sm:grid-cols-[2.5rem_minmax(0,1fr)_9rem_7.5rem_1.25rem]',
+        'absolute inset-x-0 grid cursor-pointer grid-cols-[2.5rem_minmax(0,1fr)_auto] items-center gap-x-2 border-b border-rule px-2 sm:grid-cols-[2.5rem_minmax(0,1fr)_8rem_9.25rem_1.25rem]',
         selected ? 'bg-marking/10 outline-2 -outline-offset-2 outline-marking' : 'hover:bg-marking/5',
       )}
       style={{ height: rowHeight, transform: `translateY(${top}px)` }}
@@ -111,7 +111,7 @@ const ListRow = memo(function ListRow({ row, top, index, count, selected, onSele
           )}
         </span>
       </span>
-      <Beam name={`Balloon ${facts.balloon}`} decorative className="hidden w-36 sm:block" {...beam} />
+      <Beam name={`Balloon ${facts.balloon}`} decorative className="hidden w-32 sm:block" {...beam} />
       <span className="hidden sm:block">
         <VerdictMark verdict={row.verdict} detail={out > 0 ? String(out) : undefined} />
       </span>
