@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { Response } from 'supertest';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { buildAccessScene, persons, strangers, type AccessScene } from './testing/access-scene.ts';
-import { accessTable, type AccessRow } from './testing/access-table.ts';
+import { accessTable, type AccessRow } from './testing/fixtures/access-table.ts';
 import { anonymous, ifVersion, onceKey, signInAs, type Client } from './testing/sign-in.ts';
 
 let scene: AccessScene;

@@ -94,3 +94,8 @@ export async function showWhereItStands(visitors: Readonly<Record<string, Visito
   for (const [name, { page }] of Object.entries(visitors))
     await page.screenshot({ path: join(shots, `broken-${name}.png`), fullPage: true });
 }
+
+/** Three people, each in a browser of their own. */
+export function newVisitors(browser: Browser): Promise<[Visitor, Visitor, Visitor]> {
+  return Promise.all([newVisitor(browser), newVisitor(browser), newVisitor(browser)]);
+}

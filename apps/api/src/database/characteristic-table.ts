@@ -1,3 +1,4 @@
+// Longer than most: the table is written as one piece, so that all of a revision is refused or written at once.
 import { randomUUID } from 'node:crypto';
 import { isUndetermined, type ToleranceLimits } from '@trammel/metrology/conformance';
 import { statedLimits } from '@trammel/metrology/tolerance-notation';
