@@ -35,7 +35,12 @@ const columns: DataColumn<WorklistItem>[] = [
     id: 'nextStep',
     header: 'Next step',
     wrap: true,
-    cell: (row) => row.nextStep ?? <span className="text-pencil">Lies with {row.holder}</span>,
+    cell: (row) =>
+      row.nextStep ?? (
+        <span className="text-pencil">
+          {row.holder === 'Nobody' ? 'Nothing more to do' : `Lies with ${row.holder}`}
+        </span>
+      ),
   },
   {
     id: 'findings',
