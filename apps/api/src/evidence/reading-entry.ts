@@ -3,6 +3,8 @@ import { isUndetermined } from '@trammel/metrology';
 import { convertDecimal } from '@trammel/metrology/units';
 import { takesAttribute, type CharacteristicFacts } from './characteristic-facts.ts';
 
+/** What most readings look like; anything else is read with all its rules. */
+const plainNumber = /^-?\d{1,15}(?:\.\d{1,15})?$/;
 const withUnit = /^([+\-−]?[\d.]+)\s*([^\d\s.].*)$/u;
 
 export type EntryMeaning =
@@ -22,6 +24,8 @@ export function endsInFigure(text: string): boolean {
  * The typed text is what is kept; a unit written behind the number converts exactly and is never rounded first (R11).
  */
 export function readEntry(text: string, facts: CharacteristicFacts): EntryMeaning {
+  const measured = facts.kind !== 'attribute' && facts.kind !== 'note';
+  if (measured && plainNumber.test(text)) return { kind: 'number', text };
   const word = text.toLowerCase();
   if (word === 'pass' || word === 'fail') {
     if (takesAttribute(facts)) return { kind: word };
@@ -30,7 +34,7 @@ export function readEntry(text: string, facts: CharacteristicFacts): EntryMeanin
       reason: `Balloon ${facts.balloon} needs a measured value; "${text}" is not a reading. Enter the number in ${facts.unit}.`,
     };
   }
-  if (facts.kind === 'attribute' || facts.kind === 'note') {
+  if (!measured) {
     return {
       kind: 'refused',
       reason: `Balloon ${facts.balloon} is checked, not measured: enter pass or fail.`,
