@@ -42,6 +42,7 @@ export class RowWork {
   private readonly rules: JudgingRules;
   private readonly compile: ReturnType<typeof limitCompiler>;
   private readonly inHand = new Map<string, RowInHand>();
+  private last: RowInHand | null = null;
   private readonly blocked = new Map<string, boolean>();
   private readonly prepare: Prepare;
 
@@ -75,6 +76,8 @@ export class RowWork {
   }
 
   row(facts: CharacteristicFacts, streamId: string): RowInHand {
+    // Changes mostly come along a row.
+    if (this.last?.facts === facts && this.last.stored.streamId === streamId) return this.last;
     const key = `${facts.id} ${streamId}`;
     let row = this.inHand.get(key);
     if (row === undefined) {
@@ -84,6 +87,7 @@ export class RowWork {
       row = { facts, stored, texts: decodeReadings(stored.readings), changed: false };
       this.inHand.set(key, row);
     }
+    this.last = row;
     return row;
   }
 
